@@ -1,10 +1,16 @@
 // Bundles the extension's four programs into dist/. `--watch` rebuilds on change, `--production` minifies.
 import { build, context } from "esbuild";
-import { cpSync, mkdirSync } from "node:fs";
+import { cpSync, mkdirSync, readdirSync, rmSync } from "node:fs";
 
 const production = process.argv.includes("--production");
 const watch = process.argv.includes("--watch");
-const shared = { bundle: true, minify: production, sourcemap: production ? false : "linked", logLevel: "warning", outdir: "dist" };
+const shared = {
+  bundle: true,
+  minify: production,
+  sourcemap: production ? false : "linked",
+  logLevel: "warning",
+  outdir: "dist",
+};
 const node = { ...shared, platform: "node", format: "cjs", target: "node20" };
 
 const programs = [
@@ -21,8 +27,12 @@ const programs = [
   },
 ];
 
-mkdirSync("dist", { recursive: true });
+mkdirSync("dist/icons", { recursive: true });
 cpSync("src/plan/plan.schema.json", "dist/plan.schema.json");
+for (const name of readdirSync("webview/icons")) {
+  if (/\.(png|svg)$/.test(name)) cpSync(`webview/icons/${name}`, `dist/icons/${name}`);
+}
+if (production) for (const name of readdirSync("dist")) if (name.endsWith(".map")) rmSync(`dist/${name}`);
 if (watch) {
   for (const program of programs) await (await context(program)).watch();
   console.log("Watching src and webview.");

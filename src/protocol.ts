@@ -15,8 +15,8 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   /** Rows to list of a long table. */
   | { readonly type: "filter"; readonly filter: SetFilter }
   | { readonly type: "copy"; readonly id: number; readonly as: "markdown" | "table" }
-  /** Open the CSV at a line. */
-  | { readonly type: "openLine"; readonly line: number }
+  /** Open the CSV (or the plan) at a line. */
+  | { readonly type: "openLine"; readonly line: number; /** The line is one of the plan file. */ readonly inPlan?: boolean }
   /** Actions named on a status: choose another file, read again. */
   | { readonly type: "readAgain" }
 );

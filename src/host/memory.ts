@@ -1,0 +1,54 @@
+import { createHash } from "node:crypto";
+import type { Memento } from "vscode";
+import type { Chosen, PlanText } from "./sessionParts";
+
+interface Entry extends Chosen {
+  /** Fingerprint of the plan file the choice was made over; null for a bare CSV. */
+  readonly basis: string | null;
+}
+
+const QUESTIONS = "questions";
+const OPEN = "open";
+/** Questions of this many files are remembered, the latest used last. */
+const LIMIT = 200;
+
+/** What the workspace remembers between windows: the question chosen for each file, and which panels were open. */
+export class Memory {
+  constructor(private readonly store: Memento) {}
+
+  /** The question chosen for this target, unless its plan file has changed since. */
+  chosen(target: string, planText: PlanText | null): Chosen | null {
+    const entry = this.questions()[target];
+    if (!entry || entry.basis !== basisOf(planText)) return null;
+    return { plan: entry.plan, guessed: entry.guessed };
+  }
+
+  remember(target: string, chosen: Chosen, planText: PlanText | null): void {
+    const { [target]: _, ...others } = this.questions();
+    const kept = Object.entries(others).slice(-(LIMIT - 1));
+    void this.store.update(QUESTIONS, Object.fromEntries([...kept, [target, { ...chosen, basis: basisOf(planText) }]]));
+  }
+
+  opened(target: string, title: string): void {
+    void this.store.update(OPEN, { ...this.store.get<Record<string, string>>(OPEN), [target]: title });
+  }
+
+  closed(target: string): void {
+    const { [target]: _, ...others } = this.store.get<Record<string, string>>(OPEN) ?? {};
+    void this.store.update(OPEN, others);
+  }
+
+  /** The target of a panel that came back from a reload without its own state, found by its title. */
+  byTitle(title: string): string | null {
+    const entries = Object.entries(this.store.get<Record<string, string>>(OPEN) ?? {});
+    return entries.find(([, name]) => name === title)?.[0] ?? null;
+  }
+
+  private questions(): Readonly<Record<string, Entry | undefined>> {
+    return this.store.get<Record<string, Entry>>(QUESTIONS) ?? {};
+  }
+}
+
+function basisOf(planText: PlanText | null): string | null {
+  return planText && createHash("sha256").update(planText.text).digest("hex");
+}

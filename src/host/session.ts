@@ -1,0 +1,279 @@
+import type { PanelState, PlanChange, QuestionState, Reading, SetFilter, Status } from "../protocol";
+import type { Presentation } from "../report/presentation";
+import { choose, settlesGuess } from "./choose";
+import { GRACE_MS } from "./quiet";
+import type { Chosen, PlanText, SessionParts } from "./sessionParts";
+import type { Run } from "./worker/client";
+import type { Ask, Compared, Outcome, Stamp } from "./worker/messages";
+
+type Trouble = { readonly text: string; readonly line: number | null; readonly inPlan: boolean };
+
+/** Progress is worth showing after this long. */
+const SLOW_MS = 500;
+
+/**
+ * One panel's truth: which question, which result, how fresh. The newest save wins: a run that was overtaken shows nothing, and the
+ * last good result stays until a whole file has been compared.
+ */
+export class Session {
+  private run: Run | null = null;
+  private runStarted = 0;
+  private stirring = true;
+  private missing = false;
+  private trouble: Trouble | null = null;
+  private question: QuestionState | null = null;
+  private presentation: Presentation | null = null;
+  private checking = false;
+  private share: number | null = null;
+  private reading: Reading | null = null;
+  private filter: SetFilter = null;
+  /** Fingerprint and ending of what is shown. */
+  private shown: { readonly sha256: string; readonly ended: boolean } | null = null;
+  /** Fingerprint of the last reading shown, whatever the question. */
+  private lastSha: string | null = null;
+  /** State of the file that the worker read last. */
+  private lastStamp: Stamp | null = null;
+  /** Until the first result: a remembered question may still give way. */
+  private fresh = true;
+  private held: NodeJS.Timeout | null = null;
+  private planText: PlanText | null;
+  private chosen: Chosen | null;
+
+  constructor(private readonly parts: SessionParts) {
+    this.planText = parts.planText;
+    this.chosen = parts.chosen;
+  }
+
+  state(): PanelState {
+    const { target, csv } = this.parts;
+    return {
+      file: csv.file,
+      target,
+      status: this.status(),
+      question: this.question,
+      presentation: this.presentation,
+      checking: this.checking,
+      reading: this.reading,
+      filter: this.filter,
+    };
+  }
+
+  // — the file —
+
+  fileStirs(): void {
+    this.release();
+    this.stirring = true;
+    this.parts.changed();
+  }
+
+  fileSettled(stamp: Stamp | null): void {
+    this.stirring = false;
+    this.missing = stamp === null;
+    if (stamp === null) {
+      this.stop();
+      this.parts.changed();
+    } else this.start(true);
+  }
+
+  readAgain(): void {
+    this.shown = null;
+    this.stirring = true;
+    this.parts.changed();
+    this.parts.followed.afresh();
+  }
+
+  // — the question —
+
+  /** The plan file's text, newly read: it replaces what was chosen in the panel over another text. */
+  planChanged(text: PlanText, chosen: Chosen | null): void {
+    if (text.text === this.planText?.text) return;
+    this.planText = text;
+    this.chosen = chosen;
+    this.shown = null;
+    if (!this.stirring && !this.missing) this.start(true);
+  }
+
+  choose(change: PlanChange): void {
+    if (!this.question) return;
+    const guessed = this.question.guessed && !settlesGuess(change);
+    this.chosen = { plan: choose(this.question.plan, change), guessed };
+    // shown at once, so that the next choice builds on this one
+    this.question = { ...this.question, plan: this.chosen.plan, guessed };
+    this.shown = null;
+    this.fresh = false;
+    this.parts.remember(this.chosen);
+    if (!this.missing && !this.stirring) this.start(false);
+    this.parts.changed();
+  }
+
+  async setFilter(filter: SetFilter): Promise<void> {
+    this.filter = filter;
+    const before = this.presentation;
+    const presentation = await this.parts.compute.present(this.parts.target, filter);
+    if (presentation && this.presentation === before && !this.checking) this.presentation = presentation;
+    this.parts.changed();
+  }
+
+  /** The comparison shown, written out; null where there is none yet. */
+  async write(as: "markdown" | "table", date: string): Promise<string | null> {
+    if (!this.presentation) return null;
+    const { compute, target } = this.parts;
+    const text = await compute.copy(target, as, date);
+    if (text !== null || this.missing) return text;
+    // the thread that held the comparison was replaced: compare once more
+    this.shown = null;
+    this.start(false);
+    await this.run?.outcome;
+    return compute.copy(target, as, date);
+  }
+
+  dispose(): void {
+    this.stop();
+    this.parts.compute.forget(this.parts.target);
+  }
+
+  // — runs —
+
+  /** @param reread false lets the worker use the columns it has, if they are those of the file as it stands */
+  private start(reread: boolean): void {
+    this.stop();
+    const { compute, csv, followed, target } = this.parts;
+    const { filter } = this;
+    const again = reread || this.lastStamp === null || !followed.stands(this.lastStamp);
+    this.runStarted = Date.now();
+    this.share = null;
+    const live = (then: () => void) => {
+      if (this.run === run) then();
+    };
+    const known = this.shown?.sha256 ?? null;
+    const run: Run = compute.compare(
+      { session: target, path: csv.path, file: csv.file, ask: this.ask(), filter, reread: again, known },
+      {
+        progress: (share) =>
+          live(() => {
+            if (Date.now() - this.runStarted < SLOW_MS) return;
+            this.share = share;
+            this.parts.changed();
+          }),
+        preview: (result) => live(() => this.hold(result.stamp, this.doubt(result), () => this.show(result, true))),
+      },
+    );
+    this.run = run;
+    this.parts.changed();
+    void run.outcome.then((outcome) => live(() => this.finished(outcome, filter)));
+  }
+
+  private finished(outcome: Outcome, filter: SetFilter): void {
+    this.run = null;
+    this.lastStamp = stampIn(outcome);
+    switch (outcome.kind) {
+      case "compared":
+        this.hold(outcome.result.stamp, this.doubt(outcome.result), () => {
+          this.show(outcome.result, false);
+          if (filter !== this.filter) void this.setFilter(this.filter);
+        });
+        break;
+      case "same":
+        this.trouble = null;
+        this.parts.followed.accept(outcome.stamp);
+        this.parts.log("unchanged bytes");
+        break;
+      case "problem":
+        this.hold(outcome.stamp, GRACE_MS, () => this.refuse(outcome));
+        break;
+      case "failed":
+        this.parts.log(outcome.detail);
+        this.trouble = { text: outcome.text, line: null, inPlan: false };
+        break;
+      case "gone":
+      case "torn":
+        this.stirring = true;
+        this.parts.followed.afresh();
+        break;
+      case "cancelled":
+        break;
+    }
+    this.parts.changed();
+  }
+
+  /** Acts once the file has stood still, in the state it was read, for `quiet` ms; not at all if it changes first. */
+  private hold(stamp: Stamp | null, quiet: number, act: () => void): void {
+    this.release();
+    const { followed } = this.parts;
+    const left = quiet - followed.quiet();
+    // a file that changed meanwhile will settle and start another run
+    if (left <= 0) {
+      if (stamp === null || followed.stands(stamp)) act();
+      return;
+    }
+    this.held = setTimeout(() => {
+      this.held = null;
+      if (stamp === null || followed.stands(stamp)) act();
+      this.parts.changed();
+    }, left);
+  }
+
+  /** How long to wait before a result is believed: a file that used to end with a line break and does not now is likely cut short. */
+  private doubt(result: Compared): number {
+    return this.shown?.ended && !result.ended ? GRACE_MS : 0;
+  }
+
+  private show(result: Compared, checking: boolean): void {
+    if (this.reading === null || this.lastSha !== result.sha256) {
+      this.reading = { number: (this.reading?.number ?? 0) + 1, at: new Date().toISOString() };
+    }
+    this.lastSha = result.sha256;
+    this.presentation = result.presentation;
+    this.question = result.question;
+    if (this.chosen || !this.planText) this.chosen = { plan: result.question.plan, guessed: result.guessed };
+    this.checking = checking;
+    this.trouble = null;
+    if (!checking) {
+      this.fresh = false;
+      this.shown = { sha256: result.sha256, ended: result.ended };
+      this.parts.followed.accept(result.stamp);
+      const { read, compare } = result.took;
+      this.parts.log(`reading ${this.reading.number}: read ${read.toFixed(0)} ms, compared ${compare.toFixed(0)} ms`);
+    }
+    this.parts.changed();
+  }
+
+  private refuse(outcome: Extract<Outcome, { kind: "problem" }>): void {
+    this.trouble = { text: outcome.text, line: outcome.line, inPlan: outcome.inPlan };
+    if (outcome.question) this.question = outcome.question;
+    this.shown = null;
+    this.checking = false;
+    this.parts.changed();
+  }
+
+  private ask(): Ask {
+    // a guess, or a question remembered from another day, gives way where it no longer fits the file
+    if (this.chosen) return { kind: "plan", ...this.chosen, orSuggest: !this.planText && (this.fresh || this.chosen.guessed) };
+    return this.planText ? { kind: "text", ...this.planText } : { kind: "suggest" };
+  }
+
+  private stop(): void {
+    this.release();
+    const run = this.run;
+    this.run = null;
+    run?.cancel();
+  }
+
+  private release(): void {
+    if (this.held) clearTimeout(this.held);
+    this.held = null;
+  }
+
+  private status(): Status {
+    const busy = this.run !== null || this.held !== null || this.stirring;
+    if (this.missing) return { kind: "missing", text: this.parts.missingText(this.parts.csv.file) };
+    if (busy) return this.presentation ? { kind: "updating", share: this.share } : { kind: "reading" };
+    if (this.trouble) return { kind: "unusable", ...this.trouble };
+    return { kind: "ready" };
+  }
+}
+
+function stampIn(outcome: Outcome): Stamp | null {
+  if (outcome.kind === "compared") return outcome.result.stamp;
+  return outcome.kind === "same" || outcome.kind === "problem" ? outcome.stamp : null;
+}

@@ -1,0 +1,174 @@
+import { readFile } from "node:fs/promises";
+import { basename } from "node:path";
+import type { Problem } from "../engine/findings";
+import { parsePlan } from "../plan/parse";
+import type { PanelState, PlanChange } from "../protocol";
+import { sayProblem } from "../report/wording/problem";
+import { Follow } from "./follow";
+import { GRACE_MS } from "./quiet";
+import { Session } from "./session";
+import type { Chosen, PlanText } from "./sessionParts";
+import { dataPath, isPlan } from "./target";
+import type { Compute } from "./worker/client";
+import type { Stamp } from "./worker/messages";
+
+export interface SubjectParts {
+  /** URI string: the panel's key. */
+  readonly target: string;
+  /** Its path on disk: a CSV or a plan. */
+  readonly path: string;
+  readonly compute: Compute;
+  /** Workspace folders a plan may point into. */
+  readonly folders: () => readonly string[];
+  readonly watch: (path: string, poke: () => void) => { dispose(): unknown };
+  readonly recall: (planText: PlanText | null) => Chosen | null;
+  readonly remember: (chosen: Chosen, planText: PlanText | null) => void;
+  readonly changed: () => void;
+  readonly log: (text: string) => void;
+}
+
+interface Watched {
+  readonly session: Session;
+  readonly csv: string;
+  readonly follow: Follow;
+  readonly watch: { dispose(): unknown };
+}
+
+/** What a panel is about: a CSV with a question of its own, or a plan and the CSV it names. Follows both files. */
+export class Subject {
+  private watched: Watched | null = null;
+  private planFollow: Follow | null = null;
+  private planWatch: { dispose(): unknown } | null = null;
+  private planTrouble: { readonly text: string; readonly line: number | null } | null = null;
+  private planText: PlanText | null = null;
+  private held: NodeJS.Timeout | null = null;
+  private disposed = false;
+
+  constructor(private readonly parts: SubjectParts) {
+    if (isPlan(parts.path)) this.followPlan();
+    else this.followData(parts.path);
+  }
+
+  state(): PanelState {
+    const state = this.watched?.session.state() ?? this.blank();
+    return this.planTrouble ? { ...state, status: { kind: "unusable", ...this.planTrouble, inPlan: true } } : state;
+  }
+
+  get session(): Session | null {
+    return this.watched?.session ?? null;
+  }
+
+  /** Path of the CSV; null while a plan has not named one. */
+  get csv(): string | null {
+    return this.watched?.csv ?? null;
+  }
+
+  choose(change: PlanChange): void {
+    if (!this.session) return;
+    this.planTrouble = null;
+    this.session.choose(change);
+  }
+
+  readAgain(): void {
+    this.planFollow?.afresh();
+    this.session?.readAgain();
+  }
+
+  dispose(): void {
+    this.disposed = true;
+    if (this.held) clearTimeout(this.held);
+    this.planWatch?.dispose();
+    this.planFollow?.dispose();
+    this.leaveData();
+  }
+
+  private followPlan(): void {
+    const { path } = this.parts;
+    const follow = new Follow(path, {
+      stirring: () => {
+        if (this.held) clearTimeout(this.held);
+        this.held = null;
+      },
+      settled: (stamp) => void this.readPlan(stamp),
+    });
+    this.planFollow = follow;
+    this.planWatch = this.parts.watch(path, () => follow.poke());
+    follow.poke();
+  }
+
+  private async readPlan(stamp: Stamp | null): Promise<void> {
+    const { path } = this.parts;
+    const file = basename(path);
+    const text = stamp && (await readFile(path, "utf8").catch(() => null));
+    if (this.disposed) return;
+    if (text === null) return this.planUnusable({ code: "file-missing", file });
+    if (!this.planFollow?.stands(stamp)) return;
+    const parsed = parsePlan(text, file);
+    if (!parsed.ok) return this.whenStill(stamp, () => this.planUnusable(parsed.problems[0]));
+    const { data } = parsed.plan;
+    if (data === undefined) return this.whenStill(stamp, () => this.planUnusable({ code: "missing-key", key: "data", file }));
+    const csv = dataPath(path, data, this.parts.folders());
+    if (csv === null) return this.whenStill(stamp, () => this.planUnusable({ code: "outside-folder", path: data, file }));
+
+    this.planTrouble = null;
+    this.planText = { text, file };
+    if (this.watched?.csv === csv) this.watched.session.planChanged(this.planText, this.parts.recall(this.planText));
+    else this.followData(csv);
+    this.parts.changed();
+  }
+
+  /** A plan that cannot be used may be half written: say so only when it has stood still. */
+  private whenStill(stamp: Stamp | null, say: () => void): void {
+    const left = GRACE_MS - (this.planFollow?.quiet() ?? 0);
+    if (left <= 0) return say();
+    this.held = setTimeout(() => {
+      if (this.planFollow?.stands(stamp)) say();
+    }, left);
+  }
+
+  private planUnusable(problem: Problem): void {
+    this.planTrouble = { text: sayProblem(problem), line: problem.line ?? null };
+    this.parts.changed();
+  }
+
+  private followData(csv: string): void {
+    this.leaveData();
+    const { parts, planText } = this;
+    const session = new Session({
+      target: parts.target,
+      csv: { path: csv, file: basename(csv) },
+      compute: parts.compute,
+      followed: {
+        accept: (stamp) => follow.accept(stamp),
+        stands: (stamp) => follow.stands(stamp),
+        quiet: () => follow.quiet(),
+        afresh: () => follow.afresh(),
+      },
+      planText,
+      chosen: parts.recall(planText),
+      changed: parts.changed,
+      remember: (chosen) => parts.remember(chosen, this.planText),
+      missingText: (file) => sayProblem({ code: "file-missing", file }),
+      log: (text) => parts.log(`${basename(csv)}: ${text}`),
+    });
+    const follow = new Follow(csv, {
+      stirring: () => session.fileStirs(),
+      settled: (stamp) => session.fileSettled(stamp),
+    });
+    this.watched = { session, csv, follow, watch: parts.watch(csv, () => follow.poke()) };
+    follow.poke();
+  }
+
+  private leaveData(): void {
+    this.watched?.watch.dispose();
+    this.watched?.follow.dispose();
+    this.watched?.session.dispose();
+    this.watched = null;
+  }
+
+  private blank(): PanelState {
+    const { path, target } = this.parts;
+    const nothing = { question: null, presentation: null, checking: false, reading: null, filter: null };
+    return { file: basename(path), target, status: { kind: "reading" }, ...nothing };
+  }
+}

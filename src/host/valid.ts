@@ -1,0 +1,41 @@
+import { PROTOCOL_VERSION } from "../protocol";
+import type { PageMessage } from "../protocol";
+
+type Fields = Readonly<Record<string, unknown>>;
+type Check = (fields: Fields) => boolean;
+
+const text: (value: unknown) => boolean = (value) => typeof value === "string" && value.length < 100_000;
+const texts = (value: unknown) => Array.isArray(value) && value.length <= 10_000 && value.every(text);
+const finite = (value: unknown) => typeof value === "number" && Number.isFinite(value);
+const line = (value: unknown) => Number.isInteger(value) && (value as number) >= 1;
+const fields = (value: unknown): value is Fields => typeof value === "object" && value !== null && !Array.isArray(value);
+
+const CHANGES: Readonly<Record<string, Check>> = {
+  outcome: (change) => text(change["column"]),
+  exposure: (change) => text(change["column"]),
+  reference: (change) => text(change["level"]),
+  covariates: (change) => texts(change["columns"]),
+  margin: ({ value }) => value === null || (finite(value) && (value as number) > 0),
+  per: ({ value }) => finite(value) && (value as number) > 0,
+  sets: ({ sets }) => sets === "each" || sets === "steps" || sets === "every",
+  report: (change) => texts(change["columns"]),
+};
+
+const MESSAGES: Readonly<Record<PageMessage["type"], Check>> = {
+  ready: () => true,
+  choose: ({ change }) =>
+    fields(change) &&
+    typeof change["key"] === "string" &&
+    Object.hasOwn(CHANGES, change["key"]) &&
+    CHANGES[change["key"]](change),
+  filter: ({ filter }) => filter === null || (fields(filter) && texts(filter["holds"]) && texts(filter["omits"])),
+  copy: ({ id, as }) => finite(id) && (as === "markdown" || as === "table"),
+  openLine: (message) => line(message["line"]) && (message["inPlan"] === undefined || typeof message["inPlan"] === "boolean"),
+  readAgain: () => true,
+};
+
+/** A message is data from a page: believed only when it has the protocol's version and shape. */
+export function isPageMessage(value: unknown): value is PageMessage {
+  if (!fields(value) || value["v"] !== PROTOCOL_VERSION || typeof value["type"] !== "string") return false;
+  return Object.hasOwn(MESSAGES, value["type"]) && MESSAGES[value["type"] as PageMessage["type"]](value);
+}
