@@ -24,8 +24,9 @@ export class Memory {
   }
 
   remember(target: string, chosen: Chosen, planText: PlanText | null): void {
-    const { [target]: _, ...others } = this.questions();
-    const kept = Object.entries(others).slice(-(LIMIT - 1));
+    const kept = Object.entries(this.questions())
+      .filter(([other]) => other !== target)
+      .slice(-(LIMIT - 1));
     void this.store.update(QUESTIONS, Object.fromEntries([...kept, [target, { ...chosen, basis: basisOf(planText) }]]));
   }
 
@@ -34,8 +35,8 @@ export class Memory {
   }
 
   closed(target: string): void {
-    const { [target]: _, ...others } = this.store.get<Record<string, string>>(OPEN) ?? {};
-    void this.store.update(OPEN, others);
+    const others = Object.entries(this.store.get<Record<string, string>>(OPEN) ?? {}).filter(([other]) => other !== target);
+    void this.store.update(OPEN, Object.fromEntries(others));
   }
 
   /** The target of a panel that came back from a reload without its own state, found by its title. */

@@ -1,0 +1,58 @@
+import fc from "fast-check";
+import { describe, expect, test } from "vitest";
+import { isPageMessage } from "../../src/host/valid";
+
+describe("messages from the page", () => {
+  test("every message of the protocol is understood", () => {
+    const bodies = [
+      { type: "ready" },
+      { type: "readAgain" },
+      { type: "openLine", line: 3 },
+      { type: "openLine", line: 3, inPlan: true },
+      { type: "copy", id: 4, as: "markdown" },
+      { type: "copy", id: 4, as: "table" },
+      { type: "filter", filter: null },
+      { type: "filter", filter: { holds: ["a"], omits: [] } },
+      ...[
+        { key: "outcome", column: "a" },
+        { key: "exposure", column: "a" },
+        { key: "reference", level: "none" },
+        { key: "covariates", columns: ["a", "b"] },
+        { key: "margin", value: null },
+        { key: "margin", value: 0.5 },
+        { key: "per", value: 10 },
+        { key: "sets", sets: "every" },
+        { key: "report", columns: [] },
+      ].map((change) => ({ type: "choose", change })),
+    ];
+    expect(bodies.filter((body) => !isPageMessage({ v: 1, ...body }))).toEqual([]);
+  });
+  test("another version, an unknown type or a wrong value is refused", () => {
+    const wrong: unknown[] = [
+      null,
+      "ready",
+      { type: "ready" },
+      { v: 2, type: "ready" },
+      { v: 1, type: "toString" },
+      { v: 1, type: "openLine", line: 0 },
+      { v: 1, type: "openLine", line: 1.5 },
+      { v: 1, type: "copy", id: 1, as: "html" },
+      { v: 1, type: "choose", change: { key: "margin", value: NaN } },
+      { v: 1, type: "choose", change: { key: "margin", value: -1 } },
+      { v: 1, type: "choose", change: { key: "constructor" } },
+      { v: 1, type: "choose", change: { key: "covariates", columns: [1] } },
+      { v: 1, type: "filter", filter: { holds: "a", omits: [] } },
+    ];
+    expect(wrong.filter(isPageMessage)).toEqual([]);
+  });
+  test("nothing a page can send makes the check throw", () => {
+    fc.assert(
+      fc.property(fc.anything(), fc.constantFrom("choose", "copy", "filter", "openLine"), (value, type) => {
+        expect(typeof isPageMessage(value)).toBe("boolean");
+        expect(typeof isPageMessage({ v: 1, type, change: value, filter: value, line: value, id: value, as: value })).toBe(
+          "boolean",
+        );
+      }),
+    );
+  });
+});
