@@ -1,6 +1,6 @@
 import { basename } from "node:path";
 import * as vscode from "vscode";
-import type { PageMessage } from "../protocol";
+import type { PageMessage, PanelState } from "../protocol";
 import { Channel } from "./channel";
 import { html, pageRoot } from "./html";
 import type { Memory } from "./memory";
@@ -70,6 +70,10 @@ export class ComparisonPanel {
 
   get active(): boolean {
     return this.panel.active;
+  }
+
+  state(): PanelState {
+    return this.subject.state();
   }
 
   reveal(): void {

@@ -1,4 +1,5 @@
 import * as vscode from "vscode";
+import type { PanelState } from "../protocol";
 import { ComparisonPanel, VIEW_TYPE } from "./panel";
 import type { House } from "./panel";
 import { pageRoot } from "./html";
@@ -37,6 +38,10 @@ export class Panels implements vscode.WebviewPanelSerializer {
     if (target === null || this.panels.has(target)) panel.dispose();
     else this.adopt(vscode.Uri.parse(target), panel);
     return Promise.resolve();
+  }
+
+  states(): readonly PanelState[] {
+    return [...this.panels.values()].map((panel) => panel.state());
   }
 
   /** The panel a command means: the active one, else the one opened or used last. */
