@@ -11,7 +11,8 @@ const shared = {
   logLevel: "warning",
   outdir: "dist",
 };
-const node = { ...shared, platform: "node", format: "cjs", target: "node20" };
+// a package's ES modules bundle whole; its UMD file may load parts of itself at run time
+const node = { ...shared, platform: "node", format: "cjs", target: "node20", mainFields: ["module", "main"] };
 
 const programs = [
   { ...node, entryPoints: { extension: "src/extension.ts" }, external: ["vscode"] },
