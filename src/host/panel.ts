@@ -72,6 +72,10 @@ export class ComparisonPanel {
     return this.panel.active;
   }
 
+  get viewColumn(): vscode.ViewColumn | undefined {
+    return this.panel.viewColumn;
+  }
+
   state(): PanelState {
     return this.subject.state();
   }

@@ -26,7 +26,8 @@ export class Panels implements vscode.WebviewPanelSerializer {
       return;
     }
     const { extension } = this.house;
-    const place = { viewColumn: vscode.ViewColumn.Beside, preserveFocus: true };
+    // a further comparison lies over the others, instead of splitting the window once more
+    const place = { viewColumn: this.current()?.viewColumn ?? vscode.ViewColumn.Beside, preserveFocus: true };
     const options = { enableScripts: true, enableFindWidget: true, localResourceRoots: [pageRoot(extension)] };
     this.adopt(target, vscode.window.createWebviewPanel(VIEW_TYPE, words.panelTitle(""), place, options));
   }

@@ -5,6 +5,7 @@ import fs from "node:fs";
 import os from "node:os";
 import path from "node:path";
 import test from "node:test";
+import { layWorkbench } from "./cache.mjs";
 import { connectHost } from "./host.mjs";
 import { cellsOf, readPanel, rowsOfJson, rowsOfMarkdown, agree } from "./panel.mjs";
 import { startServer } from "./server.mjs";
@@ -52,7 +53,7 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
   );
 
   const server = await startServer({
-    workbench: process.env.WORKBENCH,
+    workbench: process.env.WORKBENCH ?? layWorkbench(),
     bridge: true,
     vsix: mode === "vsix" ? [process.env.VSIX] : [],
   });
