@@ -22,7 +22,7 @@ execFileSync(process.execPath, [cli, "compare", plan, "--as", "text"], { stdio: 
 console.log("");
 
 // a helper extension opens the panel, so that the product itself never opens anything unasked
-const opener = path.join(samples, "opener");
+const opener = path.join(root, "test/workbench/opener");
 const asked = { SLANTWISE_SAMPLE: plan };
 const code = ["code", "codium", "code-insiders"].find(onPath);
 if (code && !process.argv.includes("--browser")) {

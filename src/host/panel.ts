@@ -10,6 +10,9 @@ import { watchFile } from "./watch";
 import { words } from "./words";
 import type { Compute } from "./worker/client";
 
+/** A plan's panel goes by the plan's name. */
+const PLAN_ENDING = /\.slantwise\.json$/i;
+
 export const VIEW_TYPE = "slantwise.panel";
 
 export interface House {
@@ -39,7 +42,7 @@ export class ComparisonPanel {
     webview.options = { enableScripts: true, localResourceRoots: [pageRoot(extension)] };
     const icon = (theme: string) => vscode.Uri.joinPath(extension, "dist", "icons", `panel-${theme}.svg`);
     panel.iconPath = { light: icon("light"), dark: icon("dark") };
-    panel.title = words.panelTitle(basename(this.targetPath));
+    panel.title = words.panelTitle(basename(this.targetPath).replace(PLAN_ENDING, ""));
     memory.opened(key, panel.title);
 
     this.channel = new Channel(webview, (text) => log.warn(text));
