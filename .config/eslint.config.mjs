@@ -2,7 +2,7 @@
 import tseslint from "typescript-eslint";
 
 export default tseslint.config(
-  { ignores: ["dist/**", "node_modules/**", "**/*.mjs"] },
+  { ignores: ["dist/**", ".cache/**", "node_modules/**", "**/*.mjs", "**/*.js"] },
   ...tseslint.configs.strict,
   {
     files: ["src/**/*.ts", "webview/**/*.ts", "test/**/*.ts"],

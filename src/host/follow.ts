@@ -4,8 +4,10 @@ import type { Stamp } from "./worker/messages";
 import { sameStamp, stampOf } from "./worker/stamp";
 
 export interface FollowEvents {
-  /** The file is changing, or has gone. */
+  /** The file is changing, or has gone; told at each change until it is settled. */
   stirring(): void;
+  /** It looks as if saved at once: reading may begin, but nothing of it may be shown before `settled` tells the same stamp. */
+  likely(stamp: Stamp): void;
   /** It has stood still long enough; null means it is not there. */
   settled(stamp: Stamp | null): void;
 }
@@ -90,12 +92,14 @@ export class Follow {
         this.longestGap = Math.max(this.longestGap, now - this.since);
         this.seen = stamp;
         this.since = now;
+        this.events.stirring();
       } else this.begin(stamp, now);
     } else if (!this.open) return;
 
     const still = now - this.since;
     const need = quietNeeded({ stamp, accepted: this.accepted, changes: this.changes, longestGap: this.longestGap });
     if (still >= need) return this.settle(stamp);
+    if (stamp && still === 0 && need === LOOK_MS) this.events.likely(stamp);
     if (this.timer) clearTimeout(this.timer);
     this.timer = setTimeout(() => this.poke(), Math.min(LOOK_MS, need - still));
   }

@@ -1,12 +1,13 @@
-import type { PanelState, PlanChange, QuestionState, Reading, SetFilter, Status } from "../protocol";
+import type { PanelState, PlanChange, QuestionState, Reading, SetFilter } from "../protocol";
 import type { Presentation } from "../report/presentation";
 import { choose, settlesGuess } from "./choose";
 import { GRACE_MS } from "./quiet";
 import type { Chosen, PlanText, SessionParts } from "./sessionParts";
+import { statusOf } from "./status";
+import type { Trouble } from "./status";
 import type { Run } from "./worker/client";
 import type { Ask, Compared, Outcome, Stamp } from "./worker/messages";
-
-type Trouble = { readonly text: string; readonly line: number | null; readonly inPlan: boolean };
+import { sameStamp, stampIn } from "./worker/stamp";
 
 /** Progress is worth showing after this long. */
 const SLOW_MS = 500;
@@ -33,6 +34,8 @@ export class Session {
   private lastSha: string | null = null;
   /** State of the file that the worker read last. */
   private lastStamp: Stamp | null = null;
+  /** Holds back the results of a run that began before its file had settled. */
+  private gate: { readonly stamp: Stamp; readonly open: () => void } | null = null;
   /** Until the first result: a remembered question may still give way. */
   private fresh = true;
   private held: NodeJS.Timeout | null = null;
@@ -49,7 +52,13 @@ export class Session {
     return {
       file: csv.file,
       target,
-      status: this.status(),
+      status: statusOf({
+        stirring: this.stirring || this.run !== null || this.held !== null,
+        missing: this.missing ? this.parts.missingText(csv.file) : null,
+        trouble: this.trouble,
+        hasResult: this.presentation !== null,
+        share: this.share,
+      }),
       question: this.question,
       presentation: this.presentation,
       checking: this.checking,
@@ -61,14 +70,30 @@ export class Session {
   // — the file —
 
   fileStirs(): void {
+    if (this.gate) this.stop();
     this.release();
     this.stirring = true;
     this.parts.changed();
   }
 
+  /** A save that looks whole: its run begins while the file is still being watched for more, and shows nothing until it settles. */
+  fileLikely(stamp: Stamp): void {
+    let open = () => {};
+    const opened = new Promise<void>((resolve) => (open = resolve));
+    this.start(true, opened);
+    this.gate = { stamp, open };
+  }
+
   fileSettled(stamp: Stamp | null): void {
+    const gate = this.gate;
+    this.gate = null;
     this.stirring = false;
     this.missing = stamp === null;
+    if (gate && this.run && sameStamp(gate.stamp, stamp)) {
+      gate.open();
+      this.parts.changed();
+      return;
+    }
     if (stamp === null) {
       this.stop();
       this.parts.changed();
@@ -90,7 +115,7 @@ export class Session {
     this.planText = text;
     this.chosen = chosen;
     this.shown = null;
-    if (!this.stirring && !this.missing) this.start(true);
+    this.compareAnew(true);
   }
 
   choose(change: PlanChange): void {
@@ -102,7 +127,7 @@ export class Session {
     this.shown = null;
     this.fresh = false;
     this.parts.remember(this.chosen);
-    if (!this.missing && !this.stirring) this.start(false);
+    this.compareAnew(false);
     this.parts.changed();
   }
 
@@ -134,8 +159,14 @@ export class Session {
 
   // — runs —
 
+  /** The question changed: compare now, or when the file has settled. */
+  private compareAnew(reread: boolean): void {
+    if (this.stirring) this.stop();
+    else if (!this.missing) this.start(reread);
+  }
+
   /** @param reread false lets the worker use the columns it has, if they are those of the file as it stands */
-  private start(reread: boolean): void {
+  private start(reread: boolean, opened: Promise<void> = Promise.resolve()): void {
     this.stop();
     const { compute, csv, followed, target } = this.parts;
     const { filter } = this;
@@ -155,12 +186,13 @@ export class Session {
             this.share = share;
             this.parts.changed();
           }),
-        preview: (result) => live(() => this.hold(result.stamp, this.doubt(result), () => this.show(result, true))),
+        preview: (result) =>
+          void opened.then(() => live(() => this.hold(result.stamp, this.doubt(result), () => this.show(result, true)))),
       },
     );
     this.run = run;
     this.parts.changed();
-    void run.outcome.then((outcome) => live(() => this.finished(outcome, filter)));
+    void Promise.all([run.outcome, opened]).then(([outcome]) => live(() => this.finished(outcome, filter)));
   }
 
   private finished(outcome: Outcome, filter: SetFilter): void {
@@ -254,6 +286,7 @@ export class Session {
 
   private stop(): void {
     this.release();
+    this.gate = null;
     const run = this.run;
     this.run = null;
     run?.cancel();
@@ -263,17 +296,4 @@ export class Session {
     if (this.held) clearTimeout(this.held);
     this.held = null;
   }
-
-  private status(): Status {
-    const busy = this.run !== null || this.held !== null || this.stirring;
-    if (this.missing) return { kind: "missing", text: this.parts.missingText(this.parts.csv.file) };
-    if (busy) return this.presentation ? { kind: "updating", share: this.share } : { kind: "reading" };
-    if (this.trouble) return { kind: "unusable", ...this.trouble };
-    return { kind: "ready" };
-  }
-}
-
-function stampIn(outcome: Outcome): Stamp | null {
-  if (outcome.kind === "compared") return outcome.result.stamp;
-  return outcome.kind === "same" || outcome.kind === "problem" ? outcome.stamp : null;
 }

@@ -89,6 +89,7 @@ export class Subject {
         if (this.held) clearTimeout(this.held);
         this.held = null;
       },
+      likely: () => undefined,
       settled: (stamp) => void this.readPlan(stamp),
     });
     this.planFollow = follow;
@@ -153,6 +154,7 @@ export class Subject {
     });
     const follow = new Follow(csv, {
       stirring: () => session.fileStirs(),
+      likely: (stamp) => session.fileLikely(stamp),
       settled: (stamp) => session.fileSettled(stamp),
     });
     this.watched = { session, csv, follow, watch: parts.watch(csv, () => follow.poke()) };

@@ -106,8 +106,7 @@ function save(size: number): void {
 const last = () => runs.at(-1)!;
 const end = async (outcome: Outcome, run = last()) => {
   run.end(outcome);
-  await Promise.resolve();
-  await Promise.resolve();
+  for (let i = 0; i < 5; i++) await Promise.resolve();
 };
 const shown = () => session.state().presentation?.title ?? null;
 const status = () => session.state().status.kind;
@@ -214,6 +213,36 @@ describe("a session", () => {
     expect([status(), shown()]).toEqual(["ready", "two"]);
   });
 
+  test("a run that began before its file had settled shows its result only then, and is not repeated", async () => {
+    save(1);
+    await end(compared("one", stamp(1)));
+    now = null;
+    session.fileStirs();
+    session.fileLikely(stamp(2));
+    await end(compared("two", stamp(2)));
+    expect([status(), shown()]).toEqual(["updating", "one"]);
+    now = stamp(2);
+    session.fileSettled(now);
+    await new Promise((done) => setTimeout(done));
+    expect([status(), shown(), runs.length]).toEqual(["ready", "two", 2]);
+  });
+
+  test("a run that began too early is cancelled when its file changes again", async () => {
+    save(1);
+    await end(compared("one", stamp(1)));
+    now = null;
+    session.fileStirs();
+    session.fileLikely(stamp(2));
+    const early = last();
+    session.fileStirs();
+    expect(early.cancelled).toBe(true);
+    now = stamp(3);
+    session.fileSettled(now);
+    await end(compared("half", stamp(2)), early);
+    await end(compared("three", stamp(3)));
+    expect([status(), shown()]).toEqual(["ready", "three"]);
+  });
+
   test("a file torn while it was read is looked at again", async () => {
     save(1);
     await end({ kind: "torn" });
@@ -249,6 +278,18 @@ describe("the question of a session", () => {
     expect(last().order).toMatchObject({ reread: false, known: null, ask: { kind: "plan", guessed: false, orSuggest: false } });
     await end(compared("one", stamp(1), { presentation: presentation("cost"), guessed: false }));
     expect([shown(), session.state().reading?.number]).toEqual(["cost", 1]);
+  });
+
+  test("a choice made while the file is changing is compared when it has settled", async () => {
+    save(1);
+    await end(compared("one", stamp(1)));
+    now = null;
+    session.fileStirs();
+    session.fileLikely(stamp(2));
+    session.choose({ key: "margin", value: 5 });
+    now = stamp(2);
+    session.fileSettled(now);
+    expect(last().order.ask).toMatchObject({ kind: "plan", plan: { margin: 5 } });
   });
 
   test("two quick choices build on one another", async () => {
