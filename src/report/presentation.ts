@@ -84,5 +84,7 @@ export interface Strip {
     /** Indexes into `columns`. */
     readonly holds: readonly number[];
     readonly kind: ShiftRow["kind"];
+    /** As in a row's difference cell; what the panel says of the set under the pointer. */
+    readonly difference?: string;
   }[];
 }

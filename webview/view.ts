@@ -1,0 +1,14 @@
+import type { PanelState, PlanChange } from "../src/protocol";
+import type { Post } from "./channel";
+
+/** What every section is given to draw itself. */
+export interface View {
+  readonly state: PanelState;
+  readonly post: Post;
+  readonly choose: (change: PlanChange) => void;
+  /** Folded pieces. */
+  readonly isOpen: (name: string) => boolean;
+  readonly setOpen: (name: string, open: boolean) => void;
+  /** Copies the comparison and shows the host's answer beside the buttons. */
+  readonly copy: (as: "markdown" | "table") => void;
+}
