@@ -76,6 +76,7 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
   }
 
   await t.test("right-click on a CSV opens the panel with the command line's figures", async () => {
+    await wb.openRow("notes.md");
     await wb.explorerMenu("flats.csv", "Open Comparison");
     await ready();
     await matches(file);
@@ -95,6 +96,22 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
         .map((tab) => tab.label),
     );
     assert.deepEqual(tabs, ["Comparison: flats.csv"]);
+  });
+
+  await t.test("the tab's context menu and the palette open it as well, over the other panel", async () => {
+    fs.writeFileSync(path.join(folder, "second.TSV"), csv(80, 300).replaceAll(",", "\t"));
+    await wb.openRow("second.TSV");
+    await wb.tabMenu("second.TSV", "Open Comparison");
+    await page().locator("body").getByText("second.TSV").first().waitFor();
+    await ready();
+    await matches(path.join(folder, "second.TSV"));
+    await wb.openRow("flats.csv");
+    await wb.command("Slantwise: Open Comparison");
+    await page().locator("body").getByText("flats.csv").first().waitFor();
+    await ready();
+    await matches(file);
+    const columns = await host.run((vscode) => vscode.window.tabGroups.all.length);
+    assert.equal(columns, 2);
   });
 
   await t.test("a save in place changes the figures", async () => {

@@ -126,6 +126,28 @@ export async function openWorkbench({
       await item.click();
       await menu.waitFor({ state: "detached", timeout: 5000 });
     },
+    /** right click on an editor's tab, then the entry */
+    async tabMenu(name, entry) {
+      await page.locator(".tab").filter({ hasText: name }).first().click({ button: "right" });
+      const menu = page.locator(".context-view .monaco-menu");
+      const item = menu
+        .locator("[role=menuitem]")
+        .filter({ has: page.locator(`.action-label:text-is("${entry}")`) })
+        .first();
+      await item.hover();
+      await page.waitForTimeout(150);
+      await item.click();
+      await menu.waitFor({ state: "detached", timeout: 5000 });
+    },
+    /** double click on the explorer's row: the file's own editor, to stay */
+    async openRow(name) {
+      await wb.row(name).dblclick();
+      await page
+        .locator(".tab.active")
+        .filter({ has: page.locator(`.label-name:text-is("${name}")`) })
+        .first()
+        .waitFor();
+    },
     async menuLabels(name) {
       await wb.row(name).click({ button: "right" });
       await page.locator(".context-view .monaco-menu [role=menuitem]").first().waitFor();
