@@ -1,0 +1,59 @@
+import { leverages, residuals as residualsOf } from "../linear/rows";
+import type { Fit, Frame } from "../linear/types";
+import type { Variance } from "../plan";
+import { biasReduced, clusterScores } from "./cluster";
+import { sandwich, transposedTimes } from "./quadratic";
+import { LEVERAGE_GAP, robustMeat } from "./robust";
+import { satterthwaite } from "./satterthwaite";
+import type { Clustered, Covariance } from "./types";
+
+/**
+ * Covariance of a fit's coefficients, of one of the seven kinds of METHODS 3. HC2 and HC3 fall back to HC1 where a row has leverage 1.
+ * @throws Error (a bug) when CR1 or CR2 is asked of a frame without clusters, or a fit has no residual degrees of freedom
+ */
+export function covariance(frame: Frame, fit: Fit, kind: Variance): Covariance {
+  if (fit.residualDf <= 0) throw new Error("covariance of a fit without residual degrees of freedom");
+  const e = residualsOf(frame, fit);
+  if (kind === "CR1" || kind === "CR2") return clusteredCovariance(frame, fit, e, kind);
+  const h = leverages(frame, fit);
+  const leverageOneRows: number[] = [];
+  for (let i = 0; i < h.length; i++) if (1 - h[i] < LEVERAGE_GAP) leverageOneRows.push(i);
+  const used = leverageOneRows.length > 0 && (kind === "HC2" || kind === "HC3") ? "HC1" : kind;
+  const dfOf = () => fit.residualDf;
+  const shared = { kind, used, leverageOneRows, residuals: e, leverages: h, dfOf, clustered: null } as const;
+  if (used === "classical") {
+    const s2 = fit.residualSumOfSquares / fit.residualDf;
+    return { ...shared, matrix: fit.inverse.map((v) => v * s2) };
+  }
+  const matrix = sandwich(fit.rInverse, robustMeat(frame, fit, e, h, used), fit.columns.length);
+  const factor = used === "HC1" ? frame.n / fit.residualDf : 1;
+  return { ...shared, matrix: factor === 1 ? matrix : matrix.map((v) => v * factor) };
+}
+
+function clusteredCovariance(frame: Frame, fit: Fit, e: Float64Array, kind: "CR1" | "CR2"): Covariance {
+  if (!frame.clusters) throw new Error(`${kind} without clusters`);
+  const p = fit.columns.length;
+  const clustered = kind === "CR1" ? clusterScores(frame, fit, e) : biasReduced(frame, fit, e);
+  const factor = kind === "CR1" ? clusterFactor(frame, fit) : 1;
+  const matrix = sandwich(fit.rInverse, scoreProducts(clustered, p), p).map((v) => v * factor);
+  const { count } = frame.clusters;
+  const dfOf = (combination: Float64Array) => {
+    if (kind === "CR1") return count > 1 ? count - 1 : null;
+    return satterthwaite(clustered, transposedTimes(fit.rInverse, combination));
+  };
+  return { kind, used: kind, matrix, leverageOneRows: [], residuals: e, leverages: null, dfOf, clustered };
+}
+
+/** CR1's small-sample factor J/(J−1)·(n−1)/(n−p); 1 for other uses of the sums. */
+export function clusterFactor(frame: Frame, fit: Fit): number {
+  const j = frame.clusters!.count;
+  return (j / (j - 1)) * ((frame.n - 1) / fit.residualDf);
+}
+
+function scoreProducts({ scores, count }: Clustered, p: number): Float64Array {
+  const out = new Float64Array(p * p);
+  for (let c = 0; c < count; c++) {
+    for (let a = 0; a < p; a++) for (let b = 0; b < p; b++) out[a * p + b] += scores[c * p + a] * scores[c * p + b];
+  }
+  return out;
+}
