@@ -33,13 +33,11 @@ export function drawNotes(part: HTMLElement, { state, post, isOpen, setOpen }: V
       el(
         "span",
         { class: "lines" },
-        ...note.lines
-          .slice(0, LINES)
-          .map((line) =>
-            button(`line ${line}`, `note ${notes.indexOf(note)} ${line}`, () => post({ type: "openLine", line }), {
-              class: "link",
-            }),
-          ),
+        ...note.lines.slice(0, LINES).map((line) =>
+          button(`line ${line}`, `note ${notes.indexOf(note)} ${line}`, () => post({ type: "openLine", line }), {
+            class: "link",
+          }),
+        ),
         note.lines.length > LINES && el("span", { class: "quiet" }, `and ${note.lines.length - LINES} more`),
       );
     const fold = el("details", { open: isOpen("notes") });
