@@ -69,9 +69,9 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
     of.locator('body[data-status="ready"] [data-section="shifts"] [data-set]').first().waitFor({ timeout: 20_000 });
 
   /** The page's figures agree with what the command line prints for the same bytes. */
-  async function matches(csvFile) {
-    const markdown = rowsOfMarkdown(cli(csvFile, "--as", "markdown"));
-    const json = rowsOfJson(JSON.parse(cli(csvFile, "--as", "json")));
+  async function matches(csvFile, ...options) {
+    const markdown = rowsOfMarkdown(cli(csvFile, "--as", "markdown", ...options));
+    const json = rowsOfJson(JSON.parse(cli(csvFile, "--as", "json", ...options)));
     await agree(() => readPanel(page()), markdown, json);
   }
 
@@ -187,14 +187,37 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
     assert.ok(lines.filter((line) => line.includes("\t")).length >= rows + 1);
   });
 
-  await t.test("the panel survives a reload of the window", async () => {
+  await t.test("the panel and the question chosen in it survive a reload of the window", async () => {
+    const margin = async (of) =>
+      of.run((vscode) => {
+        const [state] = vscode.extensions
+          .getExtension("slantwise.slantwise")
+          .exports.states()
+          .filter(({ file: name }) => name === "flats.csv");
+        return state?.question?.plan.margin ?? null;
+      });
+    const field = page()
+      .locator('[data-section="question"] input[inputmode], [data-section="question"] input[type="number"]')
+      .last();
+    await field.fill("123");
+    await field.press("Enter");
+    await until(
+      async () => (await margin(host)) === 123,
+      async () => assert.equal(await margin(host), 123),
+    );
+    await ready();
     await wait(1500); // a page's own state is written a moment after it was set
     await wb.page.reload();
     await wb.page.locator(".monaco-workbench").waitFor({ timeout: 60_000 });
     await ready();
-    await matches(file);
+    const renewed = await connectHost(server);
+    await until(
+      async () => (await margin(renewed).catch(() => null)) === 123,
+      async () => assert.equal(await margin(renewed), 123),
+    );
+    await matches(file, "--margin", "123");
     fs.writeFileSync(file, csv(200, 150));
-    await matches(file);
+    await matches(file, "--margin", "123");
   });
 
   await t.test("a CSV outside the workspace folder is followed as well", async () => {
