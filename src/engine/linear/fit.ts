@@ -17,14 +17,15 @@ const MATERIAL = 1e-8;
  * a triangle again. A column that earlier ones determine is set aside with the columns it is a combination of (the constant, column 0, is
  * not named); the rest are fitted.
  * @param wanted frame column indexes, without repeats
+ * @param outcome column of the factor that is fitted: the outcome, or a design column for an auxiliary fit
  */
-export function fitColumns(factor: Factor, wanted: readonly number[]): Fit {
+export function fitColumns(factor: Factor, wanted: readonly number[], outcome = factor.size): Fit {
   const { size, r, scale } = factor;
   const q = size + 1;
   const p = wanted.length;
   // Work matrix: wanted columns and the outcome, column-major, q rows each.
   const work = new Float64Array((p + 1) * q);
-  [...wanted, size].forEach((c, k) => {
+  [...wanted, outcome].forEach((c, k) => {
     for (let i = 0; i <= c; i++) work[k * q + i] = r[i * q + c];
   });
   const kept: number[] = [];
@@ -49,7 +50,7 @@ export function fitColumns(factor: Factor, wanted: readonly number[]): Fit {
   const inverse = invertUpper(triangle, size2);
   const rest = tailNorm(work, p * q, size2, q);
   const outcomeNorm = Math.hypot(rest, headNorm(work, p * q, size2));
-  const outcomeScale = scale[size];
+  const outcomeScale = scale[outcome];
   const coefficients = new Float64Array(size2);
   for (let i = 0; i < size2; i++) {
     let sum = 0;

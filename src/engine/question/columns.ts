@@ -1,0 +1,40 @@
+import type { Column, NumberColumn, Table } from "../table";
+
+/** Groups of rows by a column: levels and each row's level (−1 missing). */
+export interface Groups {
+  readonly levels: readonly string[];
+  readonly codes: Int32Array;
+}
+
+export function findColumn(table: Table, name: string): Column | undefined {
+  return table.columns.find((column) => column.name === name);
+}
+
+export function isAmount(column: Column): column is NumberColumn {
+  return column.kind === "number" || column.kind === "date";
+}
+
+/** The distinct values of a numeric column, ascending; stops beyond `limit` and returns null. */
+export function distinctValues(values: Float64Array, limit: number): number[] | null {
+  const seen = new Set<number>();
+  for (const value of values) {
+    if (Number.isNaN(value)) continue;
+    seen.add(value === 0 ? 0 : value); // −0 is 0
+    if (seen.size > limit) return null;
+  }
+  return [...seen].sort((a, b) => a - b);
+}
+
+/** Any column as groups: words as they are, numbers by value in ascending order. */
+export function asGroups(column: Column): Groups {
+  if (!isAmount(column)) return column;
+  const distinct = distinctValues(column.values, Infinity)!;
+  const place = new Map(distinct.map((value, at) => [value, at]));
+  return { levels: distinct.map(String), codes: Int32Array.from(column.values, (value) => (Number.isNaN(value) ? -1 : place.get(value === 0 ? 0 : value)!)) };
+}
+
+/** Whether a column is groups by nature: words, or a numeric column with exactly two values (METHODS 2). */
+export function isGroupsByNature(column: Column): boolean {
+  if (column.kind === "date") return false;
+  return column.kind !== "number" || distinctValues(column.values, 2)?.length === 2;
+}
