@@ -1,4 +1,4 @@
-import { leverages, residuals as residualsOf } from "../linear/rows";
+import { residuals as residualsOf } from "../linear/rows";
 import type { Fit, Frame } from "../linear/types";
 import type { Variance } from "../plan";
 import { biasReduced, clusterScores } from "./cluster";
@@ -9,25 +9,29 @@ import type { Clustered, Covariance } from "./types";
 
 /**
  * Covariance of a fit's coefficients, of one of the seven kinds of METHODS 3. HC2 and HC3 fall back to HC1 where a row has leverage 1.
+ * @param from first coefficient whose covariance is wanted: with robust kinds only the block from there on is filled, at less cost
  * @throws Error (a bug) when CR1 or CR2 is asked of a frame without clusters, or a fit has no residual degrees of freedom
  */
-export function covariance(frame: Frame, fit: Fit, kind: Variance): Covariance {
+export function covariance(frame: Frame, fit: Fit, kind: Variance, from = 0): Covariance {
   if (fit.residualDf <= 0) throw new Error("covariance of a fit without residual degrees of freedom");
   const e = residualsOf(frame, fit);
   if (kind === "CR1" || kind === "CR2") return clusteredCovariance(frame, fit, e, kind);
-  const h = leverages(frame, fit);
+  const p = fit.columns.length;
+  const h = new Float64Array(frame.n);
+  const dfOf = () => fit.residualDf;
+  // Classical errors need the leverages too: the shift's influences rest on them.
+  const meat = robustMeat(frame, fit, e, h, kind, kind === "classical" ? p : from);
   const leverageOneRows: number[] = [];
   for (let i = 0; i < h.length; i++) if (1 - h[i] < LEVERAGE_GAP) leverageOneRows.push(i);
   const used = leverageOneRows.length > 0 && (kind === "HC2" || kind === "HC3") ? "HC1" : kind;
-  const dfOf = () => fit.residualDf;
   const shared = { kind, used, leverageOneRows, residuals: e, leverages: h, dfOf, clustered: null } as const;
   if (used === "classical") {
     const s2 = fit.residualSumOfSquares / fit.residualDf;
     return { ...shared, matrix: fit.inverse.map((v) => v * s2) };
   }
-  const matrix = sandwich(fit.rInverse, robustMeat(frame, fit, e, h, used), fit.columns.length);
+  const settled = used === kind ? meat : robustMeat(frame, fit, e, h, used, from);
   const factor = used === "HC1" ? frame.n / fit.residualDf : 1;
-  return { ...shared, matrix: factor === 1 ? matrix : matrix.map((v) => v * factor) };
+  return { ...shared, matrix: sandwich(fit.rInverse, settled, p).map((v) => v * factor) };
 }
 
 function clusteredCovariance(frame: Frame, fit: Fit, e: Float64Array, kind: "CR1" | "CR2"): Covariance {

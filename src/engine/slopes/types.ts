@@ -1,0 +1,40 @@
+import type { SlopesTest, VariesReadout } from "../comparison";
+import type { Design } from "../design/types";
+import type { Covariance } from "../errors/types";
+import type { Finding } from "../findings";
+import type { Factor, Fit } from "../linear/types";
+import type { Plan, Variance } from "../plan";
+
+/** What the slopes stage needs to know of one set. */
+export interface SlopesInput {
+  readonly design: Design;
+  readonly factor: Factor;
+  /** Covariates of the set. */
+  readonly set: readonly string[];
+  readonly setIndex: number;
+  readonly modifiers: readonly string[];
+  readonly variance: Variance;
+  readonly level: number;
+  readonly alpha: number;
+  readonly margin: number | null;
+  readonly reportAt: Plan["reportAt"];
+  readonly outcomeForm: "as is" | "log";
+}
+
+/** Whether a set has one effect, and what there is instead where it has not. */
+export interface SlopesOutcome {
+  readonly tests: readonly SlopesTest[];
+  readonly kind: "single" | "undecided" | "varies";
+  readonly differing: readonly string[];
+  /** Aligned with design.contrasts (null for a contrast without rows); null unless `kind` is "varies". */
+  readonly varies: { readonly perContrast: readonly (VariesReadout | null)[]; readonly joint: InteractionFit } | null;
+  readonly findings: readonly Finding[];
+}
+
+/** A fit that holds the set, some modifiers and their products with the exposure. */
+export interface InteractionFit {
+  readonly fit: Fit;
+  /** Null where the fit has no residual degrees of freedom; filled from the exposure's columns on. */
+  readonly cov: Covariance | null;
+  readonly modifiers: readonly string[];
+}
