@@ -43,7 +43,13 @@ export function typeColumn(
   return { column: wordColumn(name, cells, missing, filled), findings: [] };
 }
 
-function numberColumn(name: string, cells: readonly string[], lines: Uint32Array, missing: readonly boolean[], style: NumberStyle) {
+function numberColumn(
+  name: string,
+  cells: readonly string[],
+  lines: Uint32Array,
+  missing: readonly boolean[],
+  style: NumberStyle,
+) {
   const values = new Float64Array(cells.length).fill(NaN);
   const bad: number[] = [];
   const beyond: number[] = [];
@@ -81,7 +87,10 @@ function dateColumn(name: string, cells: readonly string[], lines: Uint32Array, 
     if (day === null) bad.push(i);
     else values[i] = day;
   });
-  return { column: { kind: "date", name, values } as const, findings: bad.length > 0 ? [unreadable(name, bad, cells, lines)] : [] };
+  return {
+    column: { kind: "date", name, values } as const,
+    findings: bad.length > 0 ? [unreadable(name, bad, cells, lines)] : [],
+  };
 }
 
 function unreadable(column: string, bad: readonly number[], cells: readonly string[], lines: Uint32Array): Finding {
@@ -105,6 +114,7 @@ function wordColumn(name: string, cells: readonly string[], missing: readonly bo
   levels.forEach((level, at) => (place[first.get(level)!] = at));
   const codes = raw.map((code) => (code < 0 ? -1 : place[code]));
   const lower = levels.map((level) => level.toLowerCase());
-  const yesNo = levels.length === 2 && YES_NO.some((pair) => pair.includes(lower[0]) && pair.includes(lower[1]) && lower[0] !== lower[1]);
+  const yesNo =
+    levels.length === 2 && YES_NO.some((pair) => pair.includes(lower[0]) && pair.includes(lower[1]) && lower[0] !== lower[1]);
   return { kind: isText ? "text" : yesNo ? "yes/no" : "category", name, levels, codes };
 }

@@ -15,7 +15,9 @@ export function nameColumns(header: readonly string[]): { readonly names: string
     let name = base;
     while (taken.has(name) || given.has(name)) name += " (again)";
     taken.add(name);
-    findings.push(original === "" ? { code: "empty-header", column: name } : { code: "duplicate-header", column: name, original });
+    findings.push(
+      original === "" ? { code: "empty-header", column: name } : { code: "duplicate-header", column: name, original },
+    );
     return name;
   });
   return { names, findings };

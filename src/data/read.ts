@@ -55,7 +55,10 @@ export function readTable(bytes: Uint8Array, { file, missing }: ReadOptions): Re
     findings.push(...typed.findings);
     return typed.column;
   });
-  return { ok: true, table: { rows: rows.length, columns, lines, source: { file, sha256: fingerprint(bytes), bytes: bytes.length }, findings } };
+  return {
+    ok: true,
+    table: { rows: rows.length, columns, lines, source: { file, sha256: fingerprint(bytes), bytes: bytes.length }, findings },
+  };
 }
 
 /** Whether the number-like cells agree on a decimal comma: some have one, and none has a decimal point that is no thousands mark. */
@@ -65,7 +68,13 @@ function usesComma(rows: readonly (readonly string[])[], isMissing: (cell: strin
     for (const cell of row) {
       if (isMissing(cell)) continue;
       if (/^[+-]?\d*,\d+$/.test(cell)) comma++;
-      else if (cell.includes(".") && numberIn(cell, "point") !== null && numberIn(cell, "comma") !== null && !/^[+-]?\d{1,3}(\.\d{3})+$/.test(cell)) return false;
+      else if (
+        cell.includes(".") &&
+        numberIn(cell, "point") !== null &&
+        numberIn(cell, "comma") !== null &&
+        !/^[+-]?\d{1,3}(\.\d{3})+$/.test(cell)
+      )
+        return false;
     }
   }
   return comma > 0;

@@ -158,7 +158,11 @@ export interface Crossing {
   readonly modifier: string;
   readonly value: number;
   /** Fieller's interval: between low and high, outside them, or everywhere. */
-  readonly interval: { readonly kind: "between" | "outside" | "everywhere"; readonly low: number | null; readonly high: number | null };
+  readonly interval: {
+    readonly kind: "between" | "outside" | "everywhere";
+    readonly low: number | null;
+    readonly high: number | null;
+  };
   /** Share of the common rows below and above the crossing. */
   readonly below: number;
   readonly above: number;

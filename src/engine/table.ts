@@ -41,4 +41,3 @@ export interface CategoryColumn {
   /** Index into `levels`, one a row; -1 marks a missing cell. */
   readonly codes: Int32Array;
 }
-

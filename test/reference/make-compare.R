@@ -79,6 +79,12 @@ case <- function(name, file, d, plan, outcome, exposure, sets, terms = list(), k
       r
     })
     slopes <- lapply(modifiers, function(z) {
+      # centred: the test is the same, and R's own rounding no longer hides the last digits
+      if (is.numeric(common[[z]]) && term(z) == z) common[[z]] <- common[[z]] - mean(common[[z]])
+      fit <- function(rhs) {
+        f <- as.formula(paste(outcome, "~", paste(rhs, collapse = " + ")))
+        if (is.null(weights)) lm(f, common) else lm(f, common, weights = .w)
+      }
       rhs <- c(exposure, unique(vapply(c(s, z), term, "")), paste0(exposure, ":", term(z)))
       mi <- fit(rhs); Vi <- covariance(mi, kind, cl); idx <- grep(":", names(coef(mi)), value = TRUE, fixed = TRUE)
       w <- wald(mi, Vi, idx); list(modifier = z, statistic = exact(w[1]), df1 = exact(w[2]), df2 = exact(w[3]), p = exact(w[4]))
@@ -98,7 +104,8 @@ write_data(swiss, "swiss.csv"); write_data(airquality, "airquality.csv"); write_
 write_data(infert, "infert.csv"); write_data(birthwt, "birthwt.csv")
 pg <- read.csv(file.path(here, "data/penguins.csv"), na.strings = "")
 mt$am <- factor(mt$am); pg$species <- factor(pg$species); pg$sex <- factor(pg$sex)
-wb <- warpbreaks; sl <- sleep; sl$group <- factor(sl$group); sl$ID <- as.character(sl$ID)
+wb <- warpbreaks; wb$tension <- factor(as.character(wb$tension)); # natural order, as in the file
+ sl <- sleep; sl$group <- factor(sl$group); sl$ID <- as.character(sl$ID)
 bw <- birthwt; bw$smoke <- factor(bw$smoke)
 an <- anorexia; an$Treat <- relevel(factor(an$Treat), "Cont")
 

@@ -146,7 +146,9 @@ function spline({ t, centre, scale, ...shared }: Start, taken: Float64Array, cou
   };
   const map = new Float64Array(size * size);
   for (let k = 0; k < size; k++) map[k * size + k] = 1 / scale;
-  const terms = Array.from({ length: size }, (_, k) => (k === 0 ? { column: shared.column } : { column: shared.column, knot: k }));
+  const terms = Array.from({ length: size }, (_, k) =>
+    k === 0 ? { column: shared.column } : { column: shared.column, knot: k },
+  );
   const intercept = new Float64Array(size);
   intercept[0] = -centre / scale;
   return { ...shared, size, at: (v) => evaluate(t(Number(v))), raw: { terms, map, intercept } };

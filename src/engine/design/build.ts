@@ -14,7 +14,12 @@ const MINUS = "−";
  * modifier. Numeric columns are centred and scaled (basis.raw undoes it); the outcome is centred.
  * @param rows table rows, complete for everything named
  */
-export function buildDesign(resolved: Resolved, rows: Int32Array, covariates: readonly string[], modifiers: readonly string[]): Design {
+export function buildDesign(
+  resolved: Resolved,
+  rows: Int32Array,
+  covariates: readonly string[],
+  modifiers: readonly string[],
+): Design {
   const columns: Float64Array[] = [new Float64Array(rows.length).fill(1)];
   const add = (values: Float64Array): number => columns.push(values) - 1;
   const blocks = new Map<string, Block>();
@@ -27,7 +32,9 @@ export function buildDesign(resolved: Resolved, rows: Int32Array, covariates: re
   const interactions = new Map<string, { columns: number[][] }>();
   for (const name of modifiers) {
     const own = blocks.get(name)!;
-    interactions.set(name, { columns: exposure.columns.map((g) => own.columns.map((k) => add(product(columns[g], columns[k])))) });
+    interactions.set(name, {
+      columns: exposure.columns.map((g) => own.columns.map((k) => add(product(columns[g], columns[k])))),
+    });
   }
   const raw = gather(resolved.outcome, rows);
   const { centre } = centring(raw);
@@ -38,7 +45,9 @@ export function buildDesign(resolved: Resolved, rows: Int32Array, covariates: re
     weights: resolved.weights ? gather(resolved.weights, rows) : null,
     clusters: resolved.cluster ? compactClusters(resolved.cluster, rows) : null,
   };
-  const modifierValues = new Map<string, ModifierValues>(modifiers.map((name) => [name, valuesOf(resolved.sources.get(name)!, rows)]));
+  const modifierValues = new Map<string, ModifierValues>(
+    modifiers.map((name) => [name, valuesOf(resolved.sources.get(name)!, rows)]),
+  );
   return { frame, outcomeCentre: centre, exposure, contrasts, covariates: blocks, interactions, modifierValues, group };
 }
 
@@ -79,7 +88,12 @@ function exposureBlock(resolved: Resolved, rows: Int32Array, add: (values: Float
     const { centre, scale } = centring(values);
     const column = add(values.map((value) => (value - centre) / scale));
     const basis = amountBasis(exposure.column, "as is", values);
-    const contrast: ContrastColumn = { contrast: `per ${exposure.per} ${exposure.column}`, level: null, column, factor: exposure.per / scale };
+    const contrast: ContrastColumn = {
+      contrast: `per ${exposure.per} ${exposure.column}`,
+      level: null,
+      column,
+      factor: exposure.per / scale,
+    };
     return { exposure: { basis, columns: [column] } as Block, contrasts: [contrast], group: null };
   }
   const { groups, reference } = exposure;

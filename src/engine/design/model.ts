@@ -65,6 +65,9 @@ export function modelRows(design: Design, fit: Fit, matrix: Float64Array | null,
 /** One design column in raw terms: shares of the terms, and of the intercept (term null). */
 function expand(basis: Basis, k: number): { term: Named | null; share: number }[] {
   const { terms, map, intercept } = basis.raw;
-  const parts: { term: Named | null; share: number }[] = terms.map((term, t) => ({ term: term as Named, share: map[t * basis.size + k] }));
+  const parts: { term: Named | null; share: number }[] = terms.map((term, t) => ({
+    term: term as Named,
+    share: map[t * basis.size + k],
+  }));
   return [...parts, { term: null, share: intercept[k] }].filter((part) => part.share !== 0);
 }

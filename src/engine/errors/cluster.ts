@@ -156,10 +156,22 @@ function adjustment(gram: Float64Array, s: Float64Array, m: number, weighted: bo
     return spectral(g.vectors, f, m);
   }
   // B = I + Q(Γ^½ S Γ^½)Q' with K = QΓ^½
-  const root = spectral(g.vectors, g.values.map((v) => (v > largest * 1e-14 ? Math.sqrt(v) : 0)), m);
-  const inverseRoot = spectral(g.vectors, g.values.map((v) => (v > largest * 1e-14 ? 1 / Math.sqrt(v) : 0)), m);
+  const root = spectral(
+    g.vectors,
+    g.values.map((v) => (v > largest * 1e-14 ? Math.sqrt(v) : 0)),
+    m,
+  );
+  const inverseRoot = spectral(
+    g.vectors,
+    g.values.map((v) => (v > largest * 1e-14 ? 1 / Math.sqrt(v) : 0)),
+    m,
+  );
   const z = symmetricEigen(product(product(root, s, m), root, m), m);
-  const middle = spectral(z.vectors, z.values.map((v) => (1 + v < SINGULAR ? -1 : 1 / Math.sqrt(1 + v) - 1)), m);
+  const middle = spectral(
+    z.vectors,
+    z.values.map((v) => (1 + v < SINGULAR ? -1 : 1 / Math.sqrt(1 + v) - 1)),
+    m,
+  );
   return product(product(inverseRoot, middle, m), inverseRoot, m);
 }
 
@@ -172,7 +184,9 @@ function signature(s: Float64Array, m: number): { metric: Float64Array; basis: F
 }
 
 function symmetricEigen(matrix: Float64Array, m: number): { values: number[]; vectors: Float64Array } {
-  const rows = Array.from({ length: m }, (_, i) => Array.from({ length: m }, (_, j) => (matrix[i * m + j] + matrix[j * m + i]) / 2));
+  const rows = Array.from({ length: m }, (_, i) =>
+    Array.from({ length: m }, (_, j) => (matrix[i * m + j] + matrix[j * m + i]) / 2),
+  );
   const found = new EigenvalueDecomposition(new Matrix(rows), { assumeSymmetric: true });
   return { values: found.realEigenvalues, vectors: Float64Array.from(found.eigenvectorMatrix.to1DArray()) };
 }
@@ -192,7 +206,8 @@ function spectral(vectors: Float64Array, f: readonly number[], m: number): Float
 
 function product(a: Float64Array, b: Float64Array, m: number): Float64Array {
   const out = new Float64Array(m * m);
-  for (let i = 0; i < m; i++) for (let k = 0; k < m; k++) for (let j = 0; j < m; j++) out[i * m + j] += a[i * m + k] * b[k * m + j];
+  for (let i = 0; i < m; i++)
+    for (let k = 0; k < m; k++) for (let j = 0; j < m; j++) out[i * m + j] += a[i * m + k] * b[k * m + j];
   return out;
 }
 

@@ -5,7 +5,12 @@
 const SPLIT = 134217729; // 2^27 + 1
 
 /** y − r − Xb, one value a row. @param columns each of length n */
-export function residualDoubled(y: Float64Array, r: Float64Array, columns: readonly Float64Array[], b: Float64Array): Float64Array {
+export function residualDoubled(
+  y: Float64Array,
+  r: Float64Array,
+  columns: readonly Float64Array[],
+  b: Float64Array,
+): Float64Array {
   const n = y.length;
   const high = Float64Array.from(y);
   const low = new Float64Array(n);

@@ -26,7 +26,10 @@ export function refine(frame: Frame, fit: Fit): Fit {
     const f = residualDoubled(frame.outcome, r, columns, b);
     const wr = frame.weights ? r.map((value, i) => value * frame.weights![i]) : r;
     const g = Float64Array.from(columns, (x) => -dotDoubled(x, wr));
-    const inner = fitColumns(factorise({ ...frame, columns, outcome: f }), columns.map((_, k) => k));
+    const inner = fitColumns(
+      factorise({ ...frame, columns, outcome: f }),
+      columns.map((_, k) => k),
+    );
     if (inner.setAside.length > 0 || inner.coefficients.some((value) => !Number.isFinite(value))) return fit;
     // δb = R⁻¹(Q'f − R⁻ᵀg) = (least squares of f) − R⁻¹R⁻ᵀg
     const step = inner.coefficients;

@@ -13,7 +13,9 @@ export function tTwoSided(t: number, df: number): number {
   const square = t * t;
   if (square === Infinity) return 0;
   // the smaller of the two arguments keeps its digits
-  return square < df ? betainc(square / (df + square), 0.5, df / 2, true, true) : betainc(df / (df + square), df / 2, 0.5, true, false);
+  return square < df
+    ? betainc(square / (df + square), 0.5, df / 2, true, true)
+    : betainc(df / (df + square), df / 2, 0.5, true, false);
 }
 
 /** P(T ≥ t). */

@@ -30,7 +30,10 @@ export function asGroups(column: Column): Groups {
   if (!isAmount(column)) return column;
   const distinct = distinctValues(column.values, Infinity)!;
   const place = new Map(distinct.map((value, at) => [value, at]));
-  return { levels: distinct.map(String), codes: Int32Array.from(column.values, (value) => (Number.isNaN(value) ? -1 : place.get(value === 0 ? 0 : value)!)) };
+  return {
+    levels: distinct.map(String),
+    codes: Int32Array.from(column.values, (value) => (Number.isNaN(value) ? -1 : place.get(value === 0 ? 0 : value)!)),
+  };
 }
 
 /** Whether a column is groups by nature: words, or a numeric column with exactly two values (METHODS 2). */

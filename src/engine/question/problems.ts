@@ -17,7 +17,13 @@ export const LEVEL_LIMIT = 200;
 export function findProblems(table: Table, plan: Plan): Problem[] {
   const unknown = namings(plan).filter((n) => !findColumn(table, n.column));
   if (unknown.length > 0) return unknown.map(({ column, role }) => ({ code: "unknown-column", column, role, nearest: null }));
-  return [...repeated(plan), ...outcomeProblems(table, plan), ...exposureProblems(table, plan), ...covariateProblems(table, plan), ...otherProblems(table, plan)];
+  return [
+    ...repeated(plan),
+    ...outcomeProblems(table, plan),
+    ...exposureProblems(table, plan),
+    ...covariateProblems(table, plan),
+    ...otherProblems(table, plan),
+  ];
 }
 
 function repeated(plan: Plan): Problem[] {
@@ -30,7 +36,9 @@ function repeated(plan: Plan): Problem[] {
   const problems: Problem[] = [];
   for (const [column, all] of roles) if (all.length > 1) problems.push({ code: "named-twice", column, roles: all });
   const listed = (plan.covariates ?? []).map((c) => c.column);
-  for (const column of new Set(listed)) if (listed.filter((c) => c === column).length > 1) problems.push({ code: "named-twice", column, roles: ["covariate", "covariate"] });
+  for (const column of new Set(listed))
+    if (listed.filter((c) => c === column).length > 1)
+      problems.push({ code: "named-twice", column, roles: ["covariate", "covariate"] });
   return problems;
 }
 
@@ -44,14 +52,26 @@ function outcomeProblems(table: Table, { outcome }: Plan): Problem[] {
 
 function exposureProblems(table: Table, { exposure }: Plan): Problem[] {
   const column = findColumn(table, exposure.column)!;
-  if (exposure.kind === "amount" && !isAmount(column)) return [{ code: "not-numeric", column: column.name, role: "exposure", example: asGroups(column).levels[0] ?? "" }];
+  if (exposure.kind === "amount" && !isAmount(column))
+    return [{ code: "not-numeric", column: column.name, role: "exposure", example: asGroups(column).levels[0] ?? "" }];
   const count = levelCount(column, GROUP_LIMIT);
-  const grouped = !isAmount(column) || exposure.kind === "groups" || (column.kind === "number" && exposure.kind === undefined && count === 2);
+  const grouped =
+    !isAmount(column) || exposure.kind === "groups" || (column.kind === "number" && exposure.kind === undefined && count === 2);
   if (!grouped) return [];
-  if (count > GROUP_LIMIT) return [{ code: "too-many-levels", column: column.name, role: "exposure", levels: asGroups(column).levels.length, limit: GROUP_LIMIT }];
+  if (count > GROUP_LIMIT)
+    return [
+      {
+        code: "too-many-levels",
+        column: column.name,
+        role: "exposure",
+        levels: asGroups(column).levels.length,
+        limit: GROUP_LIMIT,
+      },
+    ];
   const { levels } = asGroups(column);
   const { reference } = exposure;
-  if (reference !== undefined && !levels.includes(String(reference))) return [{ code: "unknown-level", column: column.name, level: String(reference), levels: [...levels] }];
+  if (reference !== undefined && !levels.includes(String(reference)))
+    return [{ code: "unknown-level", column: column.name, level: String(reference), levels: [...levels] }];
   return [];
 }
 
@@ -62,13 +82,25 @@ function covariateProblems(table: Table, plan: Plan): Problem[] {
     const stated = plan.covariates?.find((c) => c.column === name);
     const form = stated?.form ?? (isAmount(column) ? "as is" : "category");
     if (form !== "category") {
-      if (!isAmount(column)) problems.push({ code: "not-numeric", column: name, role: "covariate", example: asGroups(column).levels[0] ?? "" });
+      if (!isAmount(column))
+        problems.push({ code: "not-numeric", column: name, role: "covariate", example: asGroups(column).levels[0] ?? "" });
       continue;
     }
     if (levelCount(column, LEVEL_LIMIT) > LEVEL_LIMIT) {
-      problems.push({ code: "too-many-levels", column: name, role: "covariate", levels: asGroups(column).levels.length, limit: LEVEL_LIMIT });
+      problems.push({
+        code: "too-many-levels",
+        column: name,
+        role: "covariate",
+        levels: asGroups(column).levels.length,
+        limit: LEVEL_LIMIT,
+      });
     } else if (stated?.reference !== undefined && !asGroups(column).levels.includes(String(stated.reference))) {
-      problems.push({ code: "unknown-level", column: name, level: String(stated.reference), levels: [...asGroups(column).levels] });
+      problems.push({
+        code: "unknown-level",
+        column: name,
+        level: String(stated.reference),
+        levels: [...asGroups(column).levels],
+      });
     }
   }
   return problems;
@@ -80,19 +112,22 @@ function otherProblems(table: Table, plan: Plan): Problem[] {
   if ((variance === "CR1" || variance === "CR2") && !cluster) problems.push({ code: "cluster-needed", variance });
   if (weights) {
     const column = findColumn(table, weights)!;
-    if (!isAmount(column)) problems.push({ code: "not-numeric", column: weights, role: "weights", example: asGroups(column).levels[0] ?? "" });
+    if (!isAmount(column))
+      problems.push({ code: "not-numeric", column: weights, role: "weights", example: asGroups(column).levels[0] ?? "" });
     else {
       const at = column.values.findIndex((w) => w < 0);
       if (at >= 0) problems.push({ code: "negative-weight", column: weights, line: table.lines[at] });
     }
   }
   const free = (plan.covariates ?? []).filter((c) => !plan.always?.includes(c.column)).length;
-  if (plan.sets === "every" && free > EVERY_LIMIT) return [...problems, { code: "too-many-sets", sets: 2 ** free, limit: SETS_LIMIT }];
+  if (plan.sets === "every" && free > EVERY_LIMIT)
+    return [...problems, { code: "too-many-sets", sets: 2 ** free, limit: SETS_LIMIT }];
   const sets = listSets(plan);
   if (sets.length > SETS_LIMIT) problems.push({ code: "too-many-sets", sets: sets.length, limit: SETS_LIMIT });
   if (plan.report) {
     const wanted = new Set([...(plan.always ?? []), ...plan.report]);
-    if (!sets.some((s) => s.length === wanted.size && s.every((c) => wanted.has(c)))) problems.push({ code: "unknown-set", columns: [...plan.report] });
+    if (!sets.some((s) => s.length === wanted.size && s.every((c) => wanted.has(c))))
+      problems.push({ code: "unknown-set", columns: [...plan.report] });
   }
   return problems;
 }

@@ -46,10 +46,20 @@ export function resolveQuestion(table: Table, plan: Plan): Resolved {
   const sources = new Map<string, Source>();
   for (const name of new Set([...sets.flat(), ...modifiers, ...adjustmentColumns(plan)])) {
     if (!sets.some((s) => s.includes(name)) && !modifiers.includes(name)) continue;
-    sources.set(name, resolveSource(table, name, plan.covariates?.find((c) => c.column === name), findings));
+    sources.set(
+      name,
+      resolveSource(
+        table,
+        name,
+        plan.covariates?.find((c) => c.column === name),
+        findings,
+      ),
+    );
   }
   if (modifiers.length === 0) findings.push({ code: "no-modifier" });
-  const after = (plan.covariates ?? []).filter((c) => c.timing === "after" && sets.some((s) => s.includes(c.column))).map((c) => c.column);
+  const after = (plan.covariates ?? [])
+    .filter((c) => c.timing === "after" && sets.some((s) => s.includes(c.column)))
+    .map((c) => c.column);
   if (after.length > 0) findings.push({ code: "after-exposure", columns: after });
   const weights = plan.weights ? (findColumn(table, plan.weights) as { values: Float64Array }).values : null;
   const question: Omit<Question, "groups"> = {
@@ -71,12 +81,24 @@ export function resolveQuestion(table: Table, plan: Plan): Resolved {
     modifiers,
   };
   const cluster = plan.cluster ? asGroups(findColumn(table, plan.cluster)!) : null;
-  return { question, outcome: outcome.values, exposure, sources, sets, reported: reportedSet(plan, sets), weights, cluster, reportAt: plan.reportAt, findings };
+  return {
+    question,
+    outcome: outcome.values,
+    exposure,
+    sources,
+    sets,
+    reported: reportedSet(plan, sets),
+    weights,
+    cluster,
+    reportAt: plan.reportAt,
+    findings,
+  };
 }
 
 function resolveVariance(plan: Plan, kind: OutcomeKind, findings: Finding[]): Variance {
   const variance = plan.variance ?? (plan.cluster ? "CR2" : "HC3");
-  if (plan.cluster && variance !== "CR1" && variance !== "CR2") findings.push({ code: "clusters-ignored", cluster: plan.cluster });
+  if (plan.cluster && variance !== "CR1" && variance !== "CR2")
+    findings.push({ code: "clusters-ignored", cluster: plan.cluster });
   if (variance === "classical" && kind === "binary") {
     // The variance of a proportion changes with it: equal spread cannot hold.
     findings.push({ code: "classical-binary" });
@@ -94,7 +116,8 @@ function resolveOutcome(table: Table, { outcome }: Plan, findings: Finding[]): {
     findings.push({ code: "two-valued-outcome", yes: column.levels[yes], no: column.levels[1 - yes] ?? "" });
     return { values: Float64Array.from(column.codes, (code) => (code < 0 ? NaN : code === yes ? 1 : 0)), kind: "binary" };
   }
-  if (outcome.form === "log") return { values: logOf(table, column.name, column.values, findings), kind: outcome.kind ?? "amount" };
+  if (outcome.form === "log")
+    return { values: logOf(table, column.name, column.values, findings), kind: outcome.kind ?? "amount" };
   const two = column.kind === "number" ? distinctValues(column.values, 2) : null;
   const kind = outcome.kind ?? (two?.length === 2 ? "binary" : "amount");
   if (kind === "count") findings.push({ code: "count-as-amount" });
@@ -120,7 +143,11 @@ function referenceOf({ levels, codes }: Groups, numeric: boolean): string {
   if (named.length === 1) return named[0];
   const counts = new Array<number>(levels.length).fill(0);
   for (const code of codes) if (code >= 0) counts[code]++;
-  const order = levels.map((_, i) => i).sort((a, b) => counts[b] - counts[a] || (numeric ? Number(levels[a]) - Number(levels[b]) : naturalCompare(levels[a], levels[b])));
+  const order = levels
+    .map((_, i) => i)
+    .sort(
+      (a, b) => counts[b] - counts[a] || (numeric ? Number(levels[a]) - Number(levels[b]) : naturalCompare(levels[a], levels[b])),
+    );
   return levels[order[0]] ?? "";
 }
 
@@ -128,7 +155,12 @@ function resolveSource(table: Table, name: string, stated: Covariate | undefined
   const column = findColumn(table, name)!;
   const form = stated?.form ?? (isAmount(column) ? "as is" : "category");
   if (form === "category" || !isAmount(column)) {
-    return { kind: "category", column: name, groups: asGroups(column), reference: stated?.reference === undefined ? null : String(stated.reference) };
+    return {
+      kind: "category",
+      column: name,
+      groups: asGroups(column),
+      reference: stated?.reference === undefined ? null : String(stated.reference),
+    };
   }
   if (form !== "log") return { kind: "amount", column: name, form, values: column.values };
   // Values ≤ 0 have no logarithm: they count as missing; the basis takes the logarithm.

@@ -3,7 +3,19 @@ import type { Plan } from "../plan";
 /** Every place of the plan that names a column, with the role's word and the path to it. */
 export interface Naming {
   readonly column: string;
-  readonly role: "outcome" | "exposure" | "covariate" | "always" | "set" | "report" | "modifier" | "cluster" | "weights" | "keep" | "id" | "reportAt";
+  readonly role:
+    | "outcome"
+    | "exposure"
+    | "covariate"
+    | "always"
+    | "set"
+    | "report"
+    | "modifier"
+    | "cluster"
+    | "weights"
+    | "keep"
+    | "id"
+    | "reportAt";
   readonly path: readonly (string | number)[];
 }
 
@@ -12,10 +24,14 @@ export function namings(plan: Plan): Naming[] {
     { column: plan.outcome.column, role: "outcome", path: ["outcome", "column"] },
     { column: plan.exposure.column, role: "exposure", path: ["exposure", "column"] },
   ];
-  (plan.covariates ?? []).forEach((c, i) => list.push({ column: c.column, role: "covariate", path: ["covariates", i, "column"] }));
+  (plan.covariates ?? []).forEach((c, i) =>
+    list.push({ column: c.column, role: "covariate", path: ["covariates", i, "column"] }),
+  );
   (plan.always ?? []).forEach((column, i) => list.push({ column, role: "always", path: ["always", i] }));
   if (Array.isArray(plan.sets)) {
-    (plan.sets as readonly (readonly string[])[]).forEach((set, s) => set.forEach((column, i) => list.push({ column, role: "set", path: ["sets", s, i] })));
+    (plan.sets as readonly (readonly string[])[]).forEach((set, s) =>
+      set.forEach((column, i) => list.push({ column, role: "set", path: ["sets", s, i] })),
+    );
   }
   (plan.report ?? []).forEach((column, i) => list.push({ column, role: "report", path: ["report", i] }));
   (plan.modifiers ?? []).forEach((column, i) => list.push({ column, role: "modifier", path: ["modifiers", i] }));
@@ -30,5 +46,11 @@ export function namings(plan: Plan): Naming[] {
 /** Columns that stand in a model beside the exposure and the outcome: covariates, always, sets, modifiers. */
 export function adjustmentColumns(plan: Plan): string[] {
   const roles = new Set(["covariate", "always", "set", "modifier"]);
-  return [...new Set(namings(plan).filter((n) => roles.has(n.role)).map((n) => n.column))];
+  return [
+    ...new Set(
+      namings(plan)
+        .filter((n) => roles.has(n.role))
+        .map((n) => n.column),
+    ),
+  ];
 }

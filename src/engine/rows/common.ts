@@ -54,7 +54,9 @@ export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
   };
   const droppedBy = [...lost].map(([column, rows]) => ({ column, rows }));
   const keptRows = kept.reduce((sum, k) => sum + k, 0);
-  const findings: Finding[] = plan.keep?.length ? [{ code: "kept-rows", rows: keptRows, columns: [...new Set(plan.keep.map((k) => k.column))] }] : [];
+  const findings: Finding[] = plan.keep?.length
+    ? [{ code: "kept-rows", rows: keptRows, columns: [...new Set(plan.keep.map((k) => k.column))] }]
+    : [];
   return { common, own, count: { read: n, common: common.length, droppedBy }, findings };
 }
 
@@ -72,11 +74,13 @@ function fails(table: Table, rule: Keep): (i: number) => boolean {
     const pass = levels.map((level) => named.has(level) === "only" in rule);
     return (i) => codes[i] < 0 || !pass[codes[i]];
   }
-  const bound = (value: number | string | undefined) => (value === undefined ? null : typeof value === "number" ? value : Date.parse(`${value}T00:00:00Z`) / 86_400_000);
+  const bound = (value: number | string | undefined) =>
+    value === undefined ? null : typeof value === "number" ? value : Date.parse(`${value}T00:00:00Z`) / 86_400_000;
   const from = bound(rule.from);
   const to = bound(rule.to);
   if (!isAmount(column)) return () => false;
-  return (i) => Number.isNaN(column.values[i]) || (from !== null && column.values[i] < from) || (to !== null && column.values[i] > to);
+  return (i) =>
+    Number.isNaN(column.values[i]) || (from !== null && column.values[i] < from) || (to !== null && column.values[i] > to);
 }
 
 function indexes(n: number, take: (i: number) => boolean): Int32Array {

@@ -19,7 +19,15 @@ export interface Fitted {
  * @param names covariates of the set that the base set does not hold
  * @param errorFactor CR1's factor of the adjusted fit, else 1
  */
-export function shiftParts(design: Design, factor: Factor, base: Fitted, full: Fitted, contrast: ContrastColumn, names: readonly string[], errorFactor: number): Shift["parts"] {
+export function shiftParts(
+  design: Design,
+  factor: Factor,
+  base: Fitted,
+  full: Fitted,
+  contrast: ContrastColumn,
+  names: readonly string[],
+  errorFactor: number,
+): Shift["parts"] {
   const unit = (fit: Fit, column: number) => Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0));
   return names.map((covariate) => {
     let estimate = 0;
@@ -37,7 +45,11 @@ export function shiftParts(design: Design, factor: Factor, base: Fitted, full: F
       for (let i = 0; i < psi.length; i++) psi[i] -= gamma * ofBeta[i] + ofGamma[i] * beta;
     }
     const variance = psi ? psi.reduce((sum, v) => sum + v * v, 0) * errorFactor : 0;
-    return { covariate, estimate: estimate * contrast.factor, standardError: finite(Math.sqrt(variance) * Math.abs(contrast.factor)) };
+    return {
+      covariate,
+      estimate: estimate * contrast.factor,
+      standardError: finite(Math.sqrt(variance) * Math.abs(contrast.factor)),
+    };
   });
 }
 

@@ -9,7 +9,12 @@ type Interval = readonly [number, number];
  * The word for a change, read from the shift first (METHODS 4, in this order). Null where an interval is missing.
  * @param margin largest difference that does not matter, on the scale of the estimates as [below, above] bounds, or null
  */
-export function changeWord(base: Estimate, adjusted: Estimate, shift: Interval | null, margin: Interval | null): ChangeWord | null {
+export function changeWord(
+  base: Estimate,
+  adjusted: Estimate,
+  shift: Interval | null,
+  margin: Interval | null,
+): ChangeWord | null {
   if (!shift || !base.interval || !adjusted.interval) return null;
   const tenth = STEADY_SHARE * Math.abs(base.estimate);
   if (within(shift, [-tenth, tenth]) || (margin && within(shift, margin))) return "steady";

@@ -28,7 +28,13 @@ export function changesOf(design: Design, interaction: InteractionFit, modifier:
     for (const [from, to] of pairs) {
       const start = contrastAt(design, interaction, contrast, new Map([[modifier, from]]));
       const end = contrastAt(design, interaction, contrast, new Map([[modifier, to]]));
-      const combined = start && end ? combine(interaction, end.map((v, i) => v - start[i])) : null;
+      const combined =
+        start && end
+          ? combine(
+              interaction,
+              end.map((v, i) => v - start[i]),
+            )
+          : null;
       const interval90 = combined && intervalOf(combined, 0.9);
       if (!combined || !interval90) {
         complete = false;

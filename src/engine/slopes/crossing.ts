@@ -23,7 +23,10 @@ export function straightOf(design: Design, { fit, cov, modifiers }: InteractionF
   const { basis } = design.covariates.get(modifiers[0])!;
   if (basis.size !== 1 || basis.form === "category") return null;
   const g = design.exposure.columns.indexOf(contrast.column);
-  const [i, j] = [fit.columns.indexOf(contrast.column), fit.columns.indexOf(design.interactions.get(modifiers[0])!.columns[g][0])];
+  const [i, j] = [
+    fit.columns.indexOf(contrast.column),
+    fit.columns.indexOf(design.interactions.get(modifiers[0])!.columns[g][0]),
+  ];
   if (i < 0 || j < 0) return null;
   const unit = (at: number) => Float64Array.from(fit.columns, (_, k) => (k === at ? 1 : 0));
   const [ei, ej] = [unit(i), unit(j)];
@@ -66,7 +69,10 @@ function fieller(line: Straight, level: number): Crossing["interval"] {
     const value = line.back(f);
     return Number.isFinite(value) ? value : null;
   };
-  if (!roots) return opensUp ? { kind: "between", low: end(-line.a / line.b), high: end(-line.a / line.b) } : { kind: "everywhere", low: null, high: null };
+  if (!roots)
+    return opensUp
+      ? { kind: "between", low: end(-line.a / line.b), high: end(-line.a / line.b) }
+      : { kind: "everywhere", low: null, high: null };
   return { kind: opensUp ? "between" : "outside", low: end(roots[0]), high: end(roots[1]) };
 }
 

@@ -19,7 +19,8 @@ export function fitInteraction({ design, factor, set, variance }: SlopesInput, m
   const exposure = design.contrasts.map((c) => c.column).filter((c) => c >= 0);
   const before = names.flatMap((name) => design.covariates.get(name)!.columns);
   const fit = fitColumns(factor, [0, ...before, ...exposure, ...products]);
-  const enough = fit.residualDf > 0 && (design.frame.clusters === null || !variance.startsWith("CR") || design.frame.clusters.count > 1);
+  const enough =
+    fit.residualDf > 0 && (design.frame.clusters === null || !variance.startsWith("CR") || design.frame.clusters.count > 1);
   const from = fit.columns.findIndex((c) => exposure.includes(c) || products.includes(c));
   const cov = enough && from >= 0 ? covariance(design.frame, fit, variance, from) : null;
   return { fit, cov, modifiers };

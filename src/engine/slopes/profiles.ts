@@ -15,16 +15,33 @@ interface Stop {
 }
 
 /** The differences of one contrast at stated values of the modifiers; profiles that cannot be estimated are left out. */
-export function profilesOf(design: Design, interaction: InteractionFit, contrast: ContrastColumn, level: number, reportAt: Plan["reportAt"]): Profile[] {
+export function profilesOf(
+  design: Design,
+  interaction: InteractionFit,
+  contrast: ContrastColumn,
+  level: number,
+  reportAt: Plan["reportAt"],
+): Profile[] {
   const { modifiers } = interaction;
   const stops = modifiers.map((name) => stopsOf(design, name, reportAt?.[name]));
-  return gridOf(stops, modifiers.map((name) => middleOf(design, name))).flatMap((choice): Profile[] => {
+  return gridOf(
+    stops,
+    modifiers.map((name) => middleOf(design, name)),
+  ).flatMap((choice): Profile[] => {
     const where = modifiers.map((column, i) => ({ column, value: choice[i].value }));
     const combination = contrastAt(design, interaction, contrast, new Map(where.map(({ column, value }) => [column, value])));
     if (!combination) return [];
     const combined = combine(interaction, combination);
     const { estimate, standardError } = combined;
-    return [{ where, estimate, standardError, interval: intervalOf(combined, level), supported: choice.every((stop) => stop.supported) }];
+    return [
+      {
+        where,
+        estimate,
+        standardError,
+        interval: intervalOf(combined, level),
+        supported: choice.every((stop) => stop.supported),
+      },
+    ];
   });
 }
 
@@ -37,7 +54,10 @@ function stopsOf(design: Design, name: string, stated: readonly (number | string
   }
   const { shared, reporting } = rangeOf(design, values.values);
   const wanted = stated?.map(Number).filter(Number.isFinite) ?? [];
-  return (wanted.length > 0 ? wanted : reporting).map((value) => ({ value, supported: shared !== null && value >= shared[0] && value <= shared[1] }));
+  return (wanted.length > 0 ? wanted : reporting).map((value) => ({
+    value,
+    supported: shared !== null && value >= shared[0] && value <= shared[1],
+  }));
 }
 
 /** Median of a numeric modifier, commonest level of a category. */
@@ -52,6 +72,7 @@ function middleOf(design: Design, name: string): Stop {
 /** Every combination up to nine; beyond that each modifier's stops in turn, the others in the middle. */
 function gridOf(stops: readonly Stop[][], middles: readonly Stop[]): Stop[][] {
   const size = stops.reduce((product, list) => product * list.length, 1);
-  if (size <= FULL_GRID || stops.length === 1) return stops.reduce<Stop[][]>((grid, list) => grid.flatMap((row) => list.map((stop) => [...row, stop])), [[]]);
+  if (size <= FULL_GRID || stops.length === 1)
+    return stops.reduce<Stop[][]>((grid, list) => grid.flatMap((row) => list.map((stop) => [...row, stop])), [[]]);
   return stops.flatMap((list, i) => list.map((stop) => middles.map((middle, k) => (k === i ? stop : middle))));
 }

@@ -46,7 +46,10 @@ function isTwoValued(sorted: Float64Array): boolean {
 }
 
 /** Levels of a category modifier that have rows, with those that every exposure group has rows in. */
-export function levelsOf(design: Design, modifier: Extract<ModifierValues, { kind: "category" }>): { readonly present: string[]; readonly shared: ReadonlySet<string> } {
+export function levelsOf(
+  design: Design,
+  modifier: Extract<ModifierValues, { kind: "category" }>,
+): { readonly present: string[]; readonly shared: ReadonlySet<string> } {
   const { codes, levels } = modifier;
   const groups = design.group?.levels.length ?? 1;
   const seen = levels.map(() => new Uint8Array(groups));

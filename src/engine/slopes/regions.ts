@@ -39,7 +39,10 @@ export function regionsOf(design: Design, interaction: InteractionFit, contrast:
       if (last?.sign === sign) regions[regions.length - 1] = { ...last, to };
       else regions.push({ modifier, from, to, sign, band, rowsShare: 0 });
     }
-    return regions.map((region, i) => ({ ...region, rowsShare: shareIn(sorted, region.from, region.to, i === regions.length - 1) }));
+    return regions.map((region, i) => ({
+      ...region,
+      rowsShare: shareIn(sorted, region.from, region.to, i === regions.length - 1),
+    }));
   });
 }
 
@@ -52,7 +55,14 @@ function bandDf(design: Design, { fit, cov, modifiers }: InteractionFit, contras
 }
 
 /** 1 or −1 where the band excludes zero at a value, 0 where it holds it, null where there is no band. */
-function bandSign(design: Design, interaction: InteractionFit, contrast: ContrastColumn, modifier: string, value: number, critical: number): 1 | -1 | 0 | null {
+function bandSign(
+  design: Design,
+  interaction: InteractionFit,
+  contrast: ContrastColumn,
+  modifier: string,
+  value: number,
+  critical: number,
+): 1 | -1 | 0 | null {
   const combination = contrastAt(design, interaction, contrast, new Map([[modifier, value]]));
   if (!combination) return null;
   const { estimate, standardError } = combine(interaction, combination);

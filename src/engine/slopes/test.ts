@@ -20,7 +20,11 @@ interface Trial {
 }
 
 /** Tests every modifier of one set: Wald tests of all interaction columns, Holm over the modifiers, D, and the verdict of each. */
-export function testSlopes(input: SlopesInput): { tests: SlopesTest[]; findings: Finding[]; fits: ReadonlyMap<string, InteractionFit> } {
+export function testSlopes(input: SlopesInput): {
+  tests: SlopesTest[];
+  findings: Finding[];
+  fits: ReadonlyMap<string, InteractionFit>;
+} {
   const findings: Finding[] = [];
   const fits = new Map<string, InteractionFit>();
   const trials = input.modifiers.map((modifier): Trial => {
@@ -62,12 +66,19 @@ function tryModifier(input: SlopesInput, modifier: string, interaction: Interact
   const at = fit.columns.flatMap((column, i) => (products.includes(column) ? [i] : []));
   const unit = (i: number) => Float64Array.from(fit.columns, (_, k) => (k === i ? 1 : 0));
   const test = cov && !exact && at.length > 0 ? wald(design.frame, fit, cov, at.map(unit)) : null;
-  const exactly = exact && fit.residualDf > 0 && changes.largest !== null && Math.abs(changes.largest.estimate) > EXACT_CHANGE * spread(design.frame.outcome);
+  const exactly =
+    exact &&
+    fit.residualDf > 0 &&
+    changes.largest !== null &&
+    Math.abs(changes.largest.estimate) > EXACT_CHANGE * spread(design.frame.outcome);
   return { modifier, test, changes, exactly };
 }
 
 function hasProducts({ design }: SlopesInput, modifier: string, { fit }: InteractionFit): boolean {
-  return design.interactions.get(modifier)!.columns.flat().some((column) => fit.columns.includes(column));
+  return design.interactions
+    .get(modifier)!
+    .columns.flat()
+    .some((column) => fit.columns.includes(column));
 }
 
 function spread(values: Float64Array): number {

@@ -18,7 +18,9 @@ describe("tails and quantiles agree with R", () => {
     it(kind, () => {
       for (const [which, x, df1, df2, expected] of values.filter((v) => v[0] === kind)) {
         const found = functions[which](Number(x), Number(df1), Number(df2));
-        expect(relativeError(found, Number(expected)), `${which} ${x} ${df1} ${df2}: ${found} ${expected}`).toBeLessThan(TOLERANCE.inference);
+        expect(relativeError(found, Number(expected)), `${which} ${x} ${df1} ${df2}: ${found} ${expected}`).toBeLessThan(
+          TOLERANCE.inference,
+        );
       }
     });
   }

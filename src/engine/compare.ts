@@ -1,0 +1,130 @@
+import { stopIf } from "./cancelled";
+import type { Comparison, SetResult } from "./comparison";
+import { buildDesign, countGroups } from "./design/build";
+import type { Design } from "./design/types";
+import type { Finding, Reason } from "./findings";
+import { finiteComparison } from "./finite";
+import { factorise } from "./linear/factorise";
+import type { Factor } from "./linear/types";
+import type { Plan } from "./plan";
+import { findProblems } from "./question/problems";
+import { resolveQuestion } from "./question/resolve";
+import type { Resolved } from "./question/resolve";
+import { findingsOf } from "./readout/findings";
+import { emptyResult } from "./readout/empty";
+import { ownEstimates } from "./readout/own";
+import { setResult } from "./readout/result";
+import type { Judged } from "./readout/result";
+import { fitSet } from "./readout/set";
+import { findRows } from "./rows/common";
+import type { Rows } from "./rows/common";
+import { readSlopes } from "./slopes";
+import type { Table } from "./table";
+
+export interface CompareOptions {
+  /** Asked between sets and row blocks; true stops the work with `Cancelled`. */
+  readonly cancelled?: () => boolean;
+}
+
+/** Parts, table errors and own-rows fits of every set are computed up to this many rows times sets; beyond it for the sets shown. */
+const IN_FULL = 4e6;
+
+/**
+ * The one door of the engine: refits a question under every listed adjustment set on the same rows.
+ * @param table as read; never changed
+ * @param plan a plan for which `findProblems(table, plan)` is empty
+ * @returns a comparison without NaN or infinity; what the data do not allow is a `none` readout or a finding
+ * @throws Cancelled; Error (a bug) when the plan has problems
+ */
+export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions = {}): Comparison {
+  const [problem] = findProblems(table, plan);
+  if (problem) throw new Error(`compare was called with an unusable plan: ${problem.code}`);
+  const resolved = resolveQuestion(table, plan);
+  const rows = findRows(table, plan, resolved);
+  const head = { table, resolved, rows };
+  const nothing = wholeReason(resolved, rows);
+  if (nothing)
+    return finish(
+      head,
+      null,
+      resolved.sets.map((set, i) => emptyResult(resolved, set, rows.own(i).length, nothing)),
+      [],
+    );
+  const { modifiers } = resolved.question;
+  const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers);
+  const factor = factorise(design.frame, cancelled);
+  const judged = resolved.sets.map((_, i): Judged => {
+    stopIf(cancelled);
+    return judge(resolved, design, factor, i);
+  });
+  const inFull = rows.common.length * judged.length <= IN_FULL;
+  const sets = judged.map((own, i): SetResult => {
+    stopIf(cancelled);
+    const ownRows = rows.own(i);
+    const full = inFull || i === resolved.reported || i === 0;
+    return setResult({
+      resolved,
+      design,
+      factor,
+      base: judged[0],
+      judged: own,
+      isBase: i === 0,
+      ownRows: ownRows.length,
+      ownEstimates: full && ownRows.length !== rows.common.length ? ownEstimates(resolved, ownRows, resolved.sets[i]) : null,
+      inFull: full,
+    });
+  });
+  return finish(head, design, sets, findingsOf(table, rows, design, judged));
+}
+
+function judge(resolved: Resolved, design: Design, factor: Factor, i: number): Judged {
+  const { variance, level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
+  const set = fitSet(design, factor, resolved.sets[i], variance);
+  const estimable = set.reasons.some((reason) => reason === null);
+  const slopes = readSlopes({
+    design,
+    factor,
+    set: resolved.sets[i],
+    setIndex: i,
+    modifiers: estimable ? modifiers : [],
+    variance,
+    level,
+    alpha: slopesAlpha,
+    margin,
+    reportAt: resolved.reportAt,
+    outcomeForm,
+  });
+  return { set, slopes };
+}
+
+/** Why no set has a number at all. */
+function wholeReason(resolved: Resolved, rows: Rows): Reason | null {
+  if (rows.common.length === 0) return { code: "no-rows", columns: rows.count.droppedBy.map((d) => d.column) };
+  const first = resolved.outcome[rows.common[0]];
+  if (rows.common.every((row) => resolved.outcome[row] === first)) return { code: "outcome-constant" };
+  const { exposure } = resolved;
+  if (exposure.kind === "amount") {
+    const value = exposure.values[rows.common[0]];
+    if (rows.common.every((row) => exposure.values[row] === value)) return { code: "exposure-constant", value: String(value) };
+    return null;
+  }
+  const level = exposure.groups.codes[rows.common[0]];
+  const constant = rows.common.every((row) => exposure.groups.codes[row] === level);
+  return constant ? { code: "exposure-constant", value: exposure.groups.levels[level] } : null;
+}
+
+function finish(
+  { table, resolved, rows }: { table: Table; resolved: Resolved; rows: Rows },
+  design: Design | null,
+  sets: readonly SetResult[],
+  findings: readonly Finding[],
+): Comparison {
+  return finiteComparison({
+    source: { ...table.source, rows: table.rows },
+    question: { ...resolved.question, groups: design ? countGroups(design) : [] },
+    rows: rows.count,
+    sets,
+    reported: resolved.reported,
+    findings: [...table.findings, ...resolved.findings, ...rows.findings, ...findings],
+  });
+}

@@ -1,0 +1,34 @@
+import type { Design } from "../design/types";
+import type { Finding } from "../findings";
+import type { Rows } from "../rows/common";
+import type { Table } from "../table";
+import type { Judged } from "./result";
+
+/** What the fits brought to light, set by set. */
+export function findingsOf(table: Table, rows: Rows, design: Design, judged: readonly Judged[]): Finding[] {
+  const findings: Finding[] = smallGroups(design);
+  const [base] = judged;
+  if (base.slopes.kind === "varies" && base.set.columns.length > 0) findings.push({ code: "base-varies" });
+  judged.forEach(({ set, slopes }, index) => {
+    if (set.reasons.every((reason) => reason !== null)) return;
+    for (const aside of set.setAside)
+      findings.push({ code: "set-aside", set: index, column: aside.column, combinationOf: [...aside.combinationOf] });
+    if (!set.cov) {
+      const why = set.fit.residualDf <= 0 ? "no-residual-df" : "one-cluster";
+      findings.push({ code: "standard-error-missing", set: index, why });
+    } else if (set.fit.residualSumOfSquares === 0) findings.push({ code: "exact-fit", set: index });
+    else if (set.cov.leverageOneRows.length > 0) {
+      const lines = set.cov.leverageOneRows.map((row) => table.lines[rows.common[row]]);
+      findings.push({ code: "leverage-one", set: index, lines, fallback: set.cov.used === set.cov.kind ? null : "HC1" });
+    }
+    findings.push(...slopes.findings);
+  });
+  return findings;
+}
+
+function smallGroups({ group }: Design): Finding[] {
+  if (!group) return [];
+  const counts = group.levels.map(() => 0);
+  for (const code of group.codes) counts[code]++;
+  return group.levels.flatMap((level, i): Finding[] => (counts[i] === 1 ? [{ code: "small-group", level, rows: 1 }] : []));
+}

@@ -1,0 +1,85 @@
+import type { ContrastColumn, Design } from "../design/types";
+import { covariance } from "../errors/covariance";
+import type { Covariance } from "../errors/types";
+import type { Reason } from "../findings";
+import { fitColumns } from "../linear/fit";
+import { refine } from "../linear/refine";
+import type { Factor, Fit } from "../linear/types";
+import type { Variance } from "../plan";
+
+/** One set, fitted. */
+export interface SetFit {
+  readonly columns: readonly string[];
+  readonly fit: Fit;
+  /** Null where there are no residual degrees of freedom, or one cluster. */
+  readonly cov: Covariance | null;
+  /** Covariate columns set aside, by covariate name, with the covariates they are a combination of. */
+  readonly setAside: readonly { readonly column: string; readonly combinationOf: readonly string[] }[];
+  /** Why a contrast has no number, aligned with design.contrasts; null where it has. */
+  readonly reasons: readonly (Reason | null)[];
+}
+
+/** Fits a set: constant, its covariates, the exposure last, so that it is the exposure that falls to a dependence with them. */
+export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance): SetFit {
+  const { frame, contrasts } = design;
+  const exposure = contrasts.map((c) => c.column).filter((c) => c >= 0);
+  const before = columns.flatMap((name) => design.covariates.get(name)!.columns);
+  const wanted = [0, ...before, ...exposure];
+  const first = fitColumns(factor, wanted);
+  const owner = ownerOf(design);
+  const short = first.residualDf < 0 || frame.n < wanted.length - first.setAside.length;
+  const clusters = variance === "CR1" || variance === "CR2" ? (frame.clusters?.count ?? 0) : null;
+  const enough = first.residualDf > 0 && (clusters === null || clusters > 1);
+  const fit = enough ? refine(frame, first) : first;
+  const aside = first.setAside.filter(({ column }) => !exposure.includes(column));
+  const tooFew: Reason | null =
+    short || frame.n <= exposure.length ? { code: "too-few-rows", rows: frame.n, coefficients: wanted.length } : null;
+  return {
+    columns,
+    fit,
+    cov: enough ? covariance(frame, fit, variance) : null,
+    setAside: mergeAside(
+      aside.map(({ column, combinationOf }) => ({ column: owner(column), combinationOf: unique(combinationOf.map(owner)) })),
+    ),
+    reasons: contrasts.map((contrast) => tooFew ?? reasonFor(design, contrast, fit, owner)),
+  };
+}
+
+function reasonFor(design: Design, contrast: ContrastColumn, fit: Fit, owner: (column: number) => string): Reason | null {
+  const { group, frame, exposure } = design;
+  if (group) {
+    const [reference] = group.levels;
+    if (!group.codes.includes(0)) return { code: "reference-empty", level: reference };
+    if (contrast.column < 0) return { code: "group-empty", level: contrast.level! };
+  } else if (frame.columns[contrast.column].every((v) => v === frame.columns[contrast.column][0])) {
+    return { code: "exposure-constant", value: "" };
+  }
+  const exposures = new Set(exposure.columns);
+  for (const { column, combinationOf } of fit.setAside) {
+    if (!exposures.has(column)) continue;
+    if (column !== contrast.column && !combinationOf.includes(contrast.column)) continue;
+    return { code: "told-by-covariates", columns: unique(combinationOf.filter((c) => !exposures.has(c)).map(owner)) };
+  }
+  return null;
+}
+
+/** The covariate a frame column belongs to. */
+function ownerOf(design: Design): (column: number) => string {
+  const owners = new Map<number, string>();
+  for (const [name, block] of design.covariates) for (const column of block.columns) owners.set(column, name);
+  for (const column of design.exposure.columns) owners.set(column, design.exposure.basis.column);
+  return (column) => owners.get(column) ?? "";
+}
+
+/** One entry a covariate: several of its columns may have gone. */
+function mergeAside(list: { column: string; combinationOf: string[] }[]): SetFit["setAside"] {
+  const merged = new Map<string, string[]>();
+  for (const { column, combinationOf } of list)
+    merged.set(
+      column,
+      unique([...(merged.get(column) ?? []), ...combinationOf]).filter((c) => c !== column),
+    );
+  return [...merged].map(([column, combinationOf]) => ({ column, combinationOf }));
+}
+
+const unique = (names: readonly string[]): string[] => [...new Set(names)];
