@@ -1,4 +1,5 @@
 import type { Plan } from "./engine/plan";
+import type { PlanChange } from "./plan/change";
 import type { Presentation } from "./report/presentation";
 
 /**
@@ -21,16 +22,7 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   | { readonly type: "readAgain" }
 );
 
-/** What a person can change in place; everything else stays as the plan has it. */
-export type PlanChange =
-  | { readonly key: "outcome"; readonly column: string }
-  | { readonly key: "exposure"; readonly column: string }
-  | { readonly key: "reference"; readonly level: string }
-  | { readonly key: "covariates"; readonly columns: readonly string[] }
-  | { readonly key: "margin"; readonly value: number | null }
-  | { readonly key: "per"; readonly value: number }
-  | { readonly key: "sets"; readonly sets: "each" | "steps" | "every" }
-  | { readonly key: "report"; readonly columns: readonly string[] };
+export type { PlanChange };
 
 /** Sets that hold all of `holds` and none of `omits`; null asks for no extra rows. */
 export type SetFilter = { readonly holds: readonly string[]; readonly omits: readonly string[] } | null;
