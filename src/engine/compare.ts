@@ -27,7 +27,7 @@ export interface CompareOptions {
 }
 
 /** Parts, table errors and own-rows fits of every set are computed up to this many rows times sets; beyond it for the sets shown. */
-const IN_FULL = 4e6;
+const IN_FULL = 2e6;
 
 /**
  * The one door of the engine: refits a question under every listed adjustment set on the same rows.
@@ -53,15 +53,16 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
   const { modifiers } = resolved.question;
   const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers);
   const factor = factorise(design.frame, cancelled);
+  const all = rows.common.length * resolved.sets.length <= IN_FULL;
+  const inFull = (i: number) => all || i === resolved.reported || i === 0;
   const judged = resolved.sets.map((_, i): Judged => {
     stopIf(cancelled);
-    return judge(resolved, design, factor, i);
+    return judge(resolved, design, factor, i, inFull(i));
   });
-  const inFull = rows.common.length * judged.length <= IN_FULL;
   const sets = judged.map((own, i): SetResult => {
     stopIf(cancelled);
     const ownRows = rows.own(i);
-    const full = inFull || i === resolved.reported || i === 0;
+    const full = inFull(i);
     return setResult({
       resolved,
       design,
@@ -77,9 +78,9 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
   return finish(head, design, sets, findingsOf(table, rows, design, judged));
 }
 
-function judge(resolved: Resolved, design: Design, factor: Factor, i: number): Judged {
+function judge(resolved: Resolved, design: Design, factor: Factor, i: number, inFull: boolean): Judged {
   const { variance, level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
-  const set = fitSet(design, factor, resolved.sets[i], variance);
+  const set = fitSet(design, factor, resolved.sets[i], variance, inFull);
   const estimable = set.reasons.some((reason) => reason === null);
   const slopes = readSlopes({
     design,

@@ -1,4 +1,3 @@
-import { ROW_BLOCK, whitenedBlocks } from "../linear/rows";
 import type { Fit, Frame } from "../linear/types";
 import { transposedTimes } from "./quadratic";
 import { LEVERAGE_GAP } from "./robust";
@@ -20,17 +19,19 @@ export function influence(frame: Frame, fit: Fit, cov: Covariance, combination: 
     for (let j = 0; j < count; j++) for (let a = 0; a < p; a++) out[j] += scores[j * p + a] * t[a];
     return out;
   }
+  // (X'WX)⁻¹-row times x is one combination of the raw columns: no need to whiten them all
   const out = new Float64Array(frame.n);
-  whitenedBlocks(frame, fit, (u, start, height) => {
-    for (let j = 0; j < p; j++) {
-      if (t[j] === 0) continue;
-      for (let i = 0; i < height; i++) out[start + i] += t[j] * u[j * ROW_BLOCK + i];
-    }
-  });
+  for (let k = 0; k < p; k++) {
+    let share = 0;
+    for (let j = k; j < p; j++) share += fit.rInverse[k * p + j] * t[j];
+    if (share === 0) continue;
+    const x = frame.columns[fit.columns[k]];
+    for (let i = 0; i < out.length; i++) out[i] += share * x[i];
+  }
   for (let i = 0; i < out.length; i++) {
     const left = 1 - cov.leverages![i];
-    const root = frame.weights ? Math.sqrt(frame.weights[i]) : 1;
-    out[i] *= (root * cov.residuals[i]) / (left < LEVERAGE_GAP ? 1 : left);
+    const w = frame.weights ? frame.weights[i] : 1;
+    out[i] *= (w * cov.residuals[i]) / (left < LEVERAGE_GAP ? 1 : left);
   }
   return out;
 }

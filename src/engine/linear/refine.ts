@@ -53,13 +53,22 @@ export function refine(frame: Frame, fit: Fit): Fit {
 function condition(fit: Fit, frame: Frame): number {
   const p = fit.columns.length;
   let inverse = 0;
-  for (let j = 0; j < p; j++) {
-    const x = frame.columns[fit.columns[j]];
-    let norm = 0;
-    for (let i = 0; i < x.length; i++) norm += (frame.weights ? frame.weights[i] : 1) * x[i] * x[i];
-    inverse += norm * fit.inverse[j * p + j];
-  }
+  for (let j = 0; j < p; j++) inverse += squaredNorm(frame, fit.columns[j]) * fit.inverse[j * p + j];
   return Math.sqrt(p * inverse);
+}
+
+const norms = new WeakMap<Float64Array, number>();
+
+/** Σ w x² of a frame's column, found once. */
+function squaredNorm(frame: Frame, column: number): number {
+  const x = frame.columns[column];
+  let norm = norms.get(x);
+  if (norm === undefined) {
+    norm = 0;
+    for (let i = 0; i < x.length; i++) norm += (frame.weights ? frame.weights[i] : 1) * x[i] * x[i];
+    norms.set(x, norm);
+  }
+  return norm;
 }
 
 /** U'·v of an upper triangle. */

@@ -19,8 +19,11 @@ export interface SetFit {
   readonly reasons: readonly (Reason | null)[];
 }
 
-/** Fits a set: constant, its covariates, the exposure last, so that it is the exposure that falls to a dependence with them. */
-export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance): SetFit {
+/**
+ * Fits a set: constant, its covariates, the exposure last, so that it is the exposure that falls to a dependence with them.
+ * @param inFull false: errors of the exposure's coefficients alone, at less cost
+ */
+export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance, inFull: boolean): SetFit {
   const { frame, contrasts } = design;
   const exposure = contrasts.map((c) => c.column).filter((c) => c >= 0);
   const before = columns.flatMap((name) => design.covariates.get(name)!.columns);
@@ -37,12 +40,17 @@ export function fitSet(design: Design, factor: Factor, columns: readonly string[
   return {
     columns,
     fit,
-    cov: enough ? covariance(frame, fit, variance) : null,
+    cov: enough ? covariance(frame, fit, variance, inFull ? 0 : firstExposure(fit.columns, exposure)) : null,
     setAside: mergeAside(
       aside.map(({ column, combinationOf }) => ({ column: owner(column), combinationOf: unique(combinationOf.map(owner)) })),
     ),
     reasons: contrasts.map((contrast) => tooFew ?? reasonFor(design, contrast, fit, owner)),
   };
+}
+
+function firstExposure(columns: readonly number[], exposure: readonly number[]): number {
+  const at = columns.findIndex((c) => exposure.includes(c));
+  return at < 0 ? 0 : at;
 }
 
 function reasonFor(design: Design, contrast: ContrastColumn, fit: Fit, owner: (column: number) => string): Reason | null {

@@ -49,6 +49,9 @@ export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
   for (const [column, source] of sources) lose(column, missingIn(source));
   const common = indexes(n, (i) => usable[i] === 1);
   const own = (set: number): Int32Array => {
+    // No modifier or covariate beyond the set's own has cost a row: the common rows are the set's own.
+    const others = [...sources.keys()].filter((column) => !resolved.sets[set].includes(column));
+    if (others.every((column) => !lost.has(column))) return common;
     const tests = [...needed.map(([, gone]) => gone), ...resolved.sets[set].map((column) => missingIn(sources.get(column)!))];
     return indexes(n, (i) => kept[i] === 1 && tests.every((gone) => !gone(i)));
   };

@@ -27,11 +27,10 @@ export interface ShiftInput {
  * estimates alike do not widen it.
  */
 export function shiftOf({ design, factor, base, full, contrast, names, level, df, withParts }: ShiftInput): Shift {
-  const combination = ({ fit }: Fitted) => Float64Array.from(fit.columns, (c) => (c === contrast.column ? contrast.factor : 0));
   const value = (fitted: Fitted) => fitted.fit.coefficients[fitted.fit.columns.indexOf(contrast.column)] * contrast.factor;
   const estimate = value(full) - value(base);
-  const psi = influence(design.frame, full.fit, full.cov, combination(full));
-  const psiBase = influence(design.frame, base.fit, base.cov, combination(base));
+  const psi = contrastInfluence(design, full, contrast);
+  const psiBase = baseInfluence(design, base, contrast);
   const errorFactor = full.cov.kind === "CR1" ? clusterFactor(design.frame, full.fit) : 1;
   let sum = 0;
   for (let i = 0; i < psi.length; i++) sum += (psi[i] - psiBase[i]) ** 2;
@@ -44,4 +43,19 @@ export function shiftOf({ design, factor, base, full, contrast, names, level, df
     interval: half === null ? null : [estimate - half, estimate + half],
     parts: withParts ? shiftParts(design, factor, base, full, contrast, names, errorFactor) : [],
   };
+}
+
+function contrastInfluence(design: Design, { fit, cov }: Fitted, contrast: ContrastColumn): Float64Array {
+  return influence(design.frame, fit, cov, Float64Array.from(fit.columns, (c) => (c === contrast.column ? contrast.factor : 0)));
+}
+
+const known = new WeakMap<Fitted["cov"], Map<number, Float64Array>>();
+
+/** The base fit's influences, the same for every set: found once. */
+function baseInfluence(design: Design, base: Fitted, contrast: ContrastColumn): Float64Array {
+  let byColumn = known.get(base.cov);
+  if (!byColumn) known.set(base.cov, (byColumn = new Map()));
+  let psi = byColumn.get(contrast.column);
+  if (!psi) byColumn.set(contrast.column, (psi = contrastInfluence(design, base, contrast)));
+  return psi;
 }

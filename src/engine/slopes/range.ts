@@ -11,8 +11,16 @@ export interface Range {
   readonly reporting: readonly number[];
 }
 
-/** The ranges of a numeric modifier on the common rows (METHODS 5). Weights are ignored. */
+const known = new WeakMap<Float64Array, Range>();
+
+/** The ranges of a numeric modifier on the common rows (METHODS 5), found once for a design's column. Weights are ignored. */
 export function rangeOf(design: Design, values: Float64Array): Range {
+  let range = known.get(values);
+  if (!range) known.set(values, (range = findRange(design, values)));
+  return range;
+}
+
+function findRange(design: Design, values: Float64Array): Range {
   const sorted = Float64Array.from(values).sort();
   const [first, last] = [sorted[0], sorted[sorted.length - 1]];
   const shared = sharedRange(design, values, first, last);
