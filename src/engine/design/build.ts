@@ -41,7 +41,7 @@ export function buildDesign(
   const frame: Frame = {
     n: rows.length,
     columns,
-    outcome: raw.map((value) => value - centre),
+    outcome: less(raw, centre),
     weights: resolved.weights ? gather(resolved.weights, rows) : null,
     clusters: resolved.cluster ? compactClusters(resolved.cluster, rows) : null,
   };
@@ -74,6 +74,13 @@ function basisColumns(basis: Basis, source: Source, rows: Int32Array): Float64Ar
     }
     return columns;
   }
+  if (basis.form === "as is") {
+    const [slope] = basis.raw.map;
+    // (value − centre)/scale with an exact power of two: the same as basis.at, without an array a row
+    const centre = -basis.raw.intercept[0] / slope;
+    for (let i = 0; i < rows.length; i++) columns[0][i] = (source.values[rows[i]] - centre) * slope;
+    return columns;
+  }
   for (let i = 0; i < rows.length; i++) {
     const values = basis.at(source.values[rows[i]]);
     for (let k = 0; k < basis.size; k++) columns[k][i] = values[k];
@@ -99,7 +106,8 @@ function exposureBlock(resolved: Resolved, rows: Int32Array, add: (values: Float
   const { groups, reference } = exposure;
   const order = [reference, ...groups.levels.filter((level) => level !== reference)];
   const place = groups.levels.map((level) => order.indexOf(level));
-  const codes = Int32Array.from(rows, (row) => place[groups.codes[row]]);
+  const codes = gatherCodes(groups.codes, rows);
+  for (let i = 0; i < codes.length; i++) codes[i] = place[codes[i]];
   const counts = new Array<number>(order.length).fill(0);
   for (const code of codes) counts[code]++;
   const basis = categoryBasis(exposure.column, groups, gatherCodes(groups.codes, rows), reference);
@@ -107,7 +115,7 @@ function exposureBlock(resolved: Resolved, rows: Int32Array, add: (values: Float
   const placed: number[] = [];
   order.slice(1).forEach((level, g) => {
     // A group without rows has no column, and so no number.
-    const column = counts[g + 1] > 0 && counts[0] > 0 ? add(Float64Array.from(codes, (code) => (code === g + 1 ? 1 : 0))) : -1;
+    const column = counts[g + 1] > 0 && counts[0] > 0 ? add(indicator(codes, g + 1)) : -1;
     if (column >= 0) placed.push(column);
     contrasts.push({ contrast: `${level} ${MINUS} ${reference}`, level, column, factor: 1 });
   });
@@ -131,6 +139,12 @@ function compactClusters({ codes }: Groups, rows: Int32Array): Clusters {
   return { codes: compact, count: place.size };
 }
 
+function indicator(codes: Int32Array, wanted: number): Float64Array {
+  const out = new Float64Array(codes.length);
+  for (let i = 0; i < codes.length; i++) if (codes[i] === wanted) out[i] = 1;
+  return out;
+}
+
 function gather(values: Float64Array, rows: Int32Array): Float64Array {
   const out = new Float64Array(rows.length);
   for (let i = 0; i < rows.length; i++) out[i] = values[rows[i]];
@@ -141,6 +155,11 @@ function gatherCodes(codes: Int32Array, rows: Int32Array): Int32Array {
   const out = new Int32Array(rows.length);
   for (let i = 0; i < rows.length; i++) out[i] = codes[rows[i]];
   return out;
+}
+
+function less(values: Float64Array, centre: number): Float64Array {
+  for (let i = 0; i < values.length; i++) values[i] -= centre;
+  return values;
 }
 
 function product(a: Float64Array, b: Float64Array): Float64Array {

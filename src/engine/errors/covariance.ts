@@ -7,17 +7,25 @@ import { LEVERAGE_GAP, robustMeat } from "./robust";
 import { satterthwaite } from "./satterthwaite";
 import type { Clustered, Covariance } from "./types";
 
+/** Two buffers of length n. */
+export interface Scratch {
+  readonly e: Float64Array;
+  readonly h: Float64Array;
+}
+
 /**
  * Covariance of a fit's coefficients, of one of the seven kinds of METHODS 3. HC2 and HC3 fall back to HC1 where a row has leverage 1.
  * @param from first coefficient whose covariance is wanted: with robust kinds only the block from there on is filled, at less cost
+ * @param scratch buffers of length n to work in, for callers that use the matrix alone: residuals and leverages of the result are then
+ *   only good until the next call (fresh memory is dear where thousands of models are fitted)
  * @throws Error (a bug) when CR1 or CR2 is asked of a frame without clusters, or a fit has no residual degrees of freedom
  */
-export function covariance(frame: Frame, fit: Fit, kind: Variance, from = 0): Covariance {
+export function covariance(frame: Frame, fit: Fit, kind: Variance, from = 0, scratch?: Scratch): Covariance {
   if (fit.residualDf <= 0) throw new Error("covariance of a fit without residual degrees of freedom");
-  const e = residualsOf(frame, fit);
+  const e = residualsOf(frame, fit, scratch?.e);
   if (kind === "CR1" || kind === "CR2") return clusteredCovariance(frame, fit, e, kind);
   const p = fit.columns.length;
-  const h = new Float64Array(frame.n);
+  const h = scratch?.h ?? new Float64Array(frame.n);
   const dfOf = () => fit.residualDf;
   // Classical errors need the leverages too: the shift's influences rest on them.
   const meat = robustMeat(frame, fit, e, h, kind, kind === "classical" ? p : from);

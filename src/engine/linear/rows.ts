@@ -3,9 +3,10 @@ import type { Fit, Frame } from "./types";
 /** Rows worked on at a time, so that a block of whitened columns stays in the cache. */
 export const ROW_BLOCK = 256;
 
-/** y − Xb, unweighted, length n. */
-export function residuals(frame: Frame, fit: Fit): Float64Array {
-  const e = Float64Array.from(frame.outcome);
+/** y − Xb, unweighted, length n. @param into buffer of length n to use instead of a fresh one */
+export function residuals(frame: Frame, fit: Fit, into?: Float64Array): Float64Array {
+  const e = into ?? new Float64Array(frame.n);
+  e.set(frame.outcome);
   if (fit.residualSumOfSquares === 0) return e.fill(0);
   fit.columns.forEach((c, k) => {
     const x = frame.columns[c];

@@ -25,9 +25,17 @@ export function distinctValues(values: Float64Array, limit: number): number[] | 
   return [...seen].sort((a, b) => a - b);
 }
 
-/** Any column as groups: words as they are, numbers by value in ascending order. */
+const known = new WeakMap<NumberColumn, Groups>();
+
+/** Any column as groups: words as they are, numbers by value in ascending order (worked out once a column). */
 export function asGroups(column: Column): Groups {
   if (!isAmount(column)) return column;
+  let groups = known.get(column);
+  if (!groups) known.set(column, (groups = numberGroups(column)));
+  return groups;
+}
+
+function numberGroups(column: NumberColumn): Groups {
   const distinct = distinctValues(column.values, Infinity)!;
   const place = new Map(distinct.map((value, at) => [value, at]));
   return {

@@ -1,5 +1,6 @@
 import type { ContrastColumn, Design } from "../design/types";
 import { covariance } from "../errors/covariance";
+import type { Scratch } from "../errors/covariance";
 import { quadratic } from "../errors/quadratic";
 import { fitColumns } from "../linear/fit";
 import { tCritical } from "../probability";
@@ -22,8 +23,17 @@ export function fitInteraction({ design, factor, set, variance }: SlopesInput, m
   const enough =
     fit.residualDf > 0 && (design.frame.clusters === null || !variance.startsWith("CR") || design.frame.clusters.count > 1);
   const from = fit.columns.findIndex((c) => exposure.includes(c) || products.includes(c));
-  const cov = enough && from >= 0 ? covariance(design.frame, fit, variance, from) : null;
+  const cov = enough && from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null;
   return { fit, cov, modifiers };
+}
+
+const scratches = new WeakMap<Design, Scratch>();
+
+/** Only the covariance matrix of an interaction fit is ever read, so all of a design's share their row buffers. */
+function scratchFor(design: Design): Scratch {
+  let scratch = scratches.get(design);
+  if (!scratch) scratches.set(design, (scratch = { e: new Float64Array(design.frame.n), h: new Float64Array(design.frame.n) }));
+  return scratch;
 }
 
 /**
