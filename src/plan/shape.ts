@@ -9,6 +9,8 @@ export type Report = (problem: Problem, at: Node) => void;
 export interface Shape {
   /** In words, to follow "must be", one item an alternative: "a number above 0", "null". */
   readonly expected: readonly string[];
+  /** The one key of an object that is told apart by it. */
+  readonly key?: string;
   /** Whether the value is of this kind at all, whatever is wrong inside it; tells alternatives apart. */
   fits(node: Node): boolean;
   /** The value, with every problem in it reported; undefined where it cannot be used. `key` names it: "covariates[1].form". */
@@ -54,7 +56,12 @@ export const oneOf = (...shapes: readonly Shape[]): Shape => {
     fits: (node) => fitting(node) !== undefined,
     read: (node, key, report) => {
       const found = fitting(node);
-      return found ? found.read(node, key, report) : refuse(node, key, expected, report);
+      if (found) return found.read(node, key, report);
+      const at = node.type === "object" ? node.children?.[0]?.children?.[0] : undefined;
+      const keys = shapes.flatMap((each) => each.key ?? []);
+      if (!at || keys.length === 0) return refuse(node, key, expected, report);
+      report({ code: "unknown-key", key: String(at.value), nearest: nearestName(String(at.value), keys) }, at);
+      return undefined;
     },
   };
 };
@@ -84,6 +91,7 @@ export const object = (expected: string, keys: Readonly<Record<string, Shape>>, 
 /** An object known by its one key, so that `oneOf` can tell several apart. */
 export const keyed = (name: string, value: Shape, expected: string): Shape => ({
   ...object(expected, { [name]: value }, [name]),
+  key: name,
   fits: (node) => namesIn(node).includes(name),
 });
 
