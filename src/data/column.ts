@@ -32,10 +32,12 @@ export function typeColumn(
   const missing = cells.map(isMissing);
   const filled = missing.reduce((sum, gone) => sum + (gone ? 0 : 1), 0);
   const share = (test: (cell: string) => boolean) => {
-    // A column of words shows it early: stop once too many cells fail.
-    let left = filled - Math.ceil(NUMERIC_SHARE * filled);
-    for (let i = 0; i < cells.length; i++) if (!missing[i] && !test(cells[i]) && left-- <= 0) return false;
-    return filled > 0;
+    let failed = 0;
+    for (let i = 0; i < cells.length; i++) {
+      // A column of words shows it early.
+      if (!missing[i] && !test(cells[i]) && !isMostly(++failed, filled)) return false;
+    }
+    return true;
   };
   if (filled === 0) return { column: { kind: "number", name, values: new Float64Array(cells.length).fill(NaN) }, findings: [] };
   if (share((cell) => numberIn(cell, style) !== null)) return numberColumn(name, cells, lines, missing, style);
@@ -93,28 +95,49 @@ function dateColumn(name: string, cells: readonly string[], lines: Uint32Array, 
   };
 }
 
-function unreadable(column: string, bad: readonly number[], cells: readonly string[], lines: Uint32Array): Finding {
+/** The finding for cells of a numeric or date column that are neither. @param bad rows; @param cells text of a row */
+export function unreadable(
+  column: string,
+  bad: readonly number[],
+  cells: { readonly [row: number]: string },
+  lines: Uint32Array,
+): Finding {
   const examples = [...new Set(bad.map((i) => cells[i]))].slice(0, EXAMPLES);
   return { code: "unreadable-cells", column, lines: bad.map((i) => lines[i]), examples };
 }
 
 function wordColumn(name: string, cells: readonly string[], missing: readonly boolean[], filled: number): Column {
   const first = new Map<string, number>();
-  const raw = new Int32Array(cells.length).fill(-1);
+  const codes = new Int32Array(cells.length).fill(-1);
   cells.forEach((cell, i) => {
     if (missing[i]) return;
     let code = first.get(cell);
     if (code === undefined) first.set(cell, (code = first.size));
-    raw[i] = code;
+    codes[i] = code;
   });
-  const found = [...first.keys()];
+  return arrangeWords(name, [...first.keys()], codes, filled);
+}
+
+/**
+ * A word column from its distinct cells in order of appearance: levels in natural order (text keeps the order of appearance), the kind by
+ * how many there are.
+ * @param codes changed in place to the arranged levels
+ */
+export function arrangeWords(name: string, found: readonly string[], codes: Int32Array, filled: number): Column {
   const isText = found.length > TEXT_LEVELS && found.length > TEXT_SHARE * filled;
-  const levels = isText ? found : [...found].sort(naturalCompare);
+  if (isText) return { kind: "text", name, levels: found, codes };
+  const order = found.map((_, i) => i).sort((a, b) => naturalCompare(found[a], found[b]));
+  const levels = order.map((i) => found[i]);
   const place = new Int32Array(found.length);
-  levels.forEach((level, at) => (place[first.get(level)!] = at));
-  const codes = raw.map((code) => (code < 0 ? -1 : place[code]));
+  order.forEach((i, at) => (place[i] = at));
+  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) codes[i] = place[codes[i]];
   const lower = levels.map((level) => level.toLowerCase());
   const yesNo =
     levels.length === 2 && YES_NO.some((pair) => pair.includes(lower[0]) && pair.includes(lower[1]) && lower[0] !== lower[1]);
-  return { kind: isText ? "text" : yesNo ? "yes/no" : "category", name, levels, codes };
+  return { kind: yesNo ? "yes/no" : "category", name, levels, codes };
+}
+
+/** Whether few enough of the filled cells fail for the column to be of a kind. */
+export function isMostly(failed: number, filled: number): boolean {
+  return filled > 0 && failed <= filled - Math.ceil(NUMERIC_SHARE * filled);
 }

@@ -1,10 +1,11 @@
 import type { Finding, Problem } from "../engine/findings";
 import type { Plan } from "../engine/plan";
-import type { Table } from "../engine/table";
+import type { Source, Table } from "../engine/table";
 import { missingTest, numberIn } from "./cell";
 import type { NumberStyle } from "./cell";
 import { typeColumn } from "./column";
 import { decode } from "./decode";
+import { readFast } from "./fast/read";
 import { fingerprint } from "./fingerprint";
 import { nameColumns } from "./headers";
 import { splitRows } from "./rows";
@@ -27,7 +28,14 @@ export const COLUMN_LIMIT = 20_000;
  * that was repaired is a finding with its line; nothing else is dropped or changed.
  * A file that cannot be a table gives a problem with its line, never an exception.
  */
-export function readTable(bytes: Uint8Array, { file, missing }: ReadOptions): Read {
+export function readTable(bytes: Uint8Array, options: ReadOptions): Read {
+  const { file, missing } = options;
+  const fast = readFast(bytes, { isMissing: missingTest(missing), numericMarks: numericMarks(missing) });
+  return fast ? { ok: true, table: { ...fast, source: sourceOf(bytes, file) } } : readGeneral(bytes, options);
+}
+
+/** The reader for every file, and the judge of the fast one. */
+export function readGeneral(bytes: Uint8Array, { file, missing }: ReadOptions): Read {
   const fail = (problem: Problem): Read => ({ ok: false, problem: { ...problem, file } });
   if (bytes.length === 0) return fail({ code: "file-empty" });
   const decoded = decode(bytes);
@@ -45,20 +53,20 @@ export function readTable(bytes: Uint8Array, { file, missing }: ReadOptions): Re
   const style: NumberStyle = separator === ";" && usesComma(rows, isMissing) ? "comma" : "point";
   if (style === "comma") findings.push({ code: "decimal-comma" });
   const columns = names.map((name, c) => {
-    const typed = typeColumn(
-      name,
-      rows.map((row) => row[c]),
-      lines,
-      isMissing,
-      style,
-    );
+    const cells = rows.map((row) => row[c]);
+    const typed = typeColumn(name, cells, lines, isMissing, style);
     findings.push(...typed.findings);
     return typed.column;
   });
-  return {
-    ok: true,
-    table: { rows: rows.length, columns, lines, source: { file, sha256: fingerprint(bytes), bytes: bytes.length }, findings },
-  };
+  return { ok: true, table: { rows: rows.length, columns, lines, source: sourceOf(bytes, file), findings } };
+}
+
+const sourceOf = (bytes: Uint8Array, file: string): Source => ({ file, sha256: fingerprint(bytes), bytes: bytes.length });
+
+/** A plan's marks that look like numbers, as the numbers they look like. */
+function numericMarks(missing: Plan["missing"]): number[] {
+  const marks = missing === undefined ? [] : "only" in missing ? missing.only : missing;
+  return marks.flatMap((mark) => numberIn(mark.trim(), "point")?.value ?? []);
 }
 
 /** Whether the number-like cells agree on a decimal comma: some have one, and none has a decimal point that is no thousands mark. */
