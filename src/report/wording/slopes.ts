@@ -1,0 +1,146 @@
+import type { Profile, Region, SetResult, SlopesTest, VariesReadout } from "../../engine/comparison";
+import { decimalsFor, exactly, fixed, levelName, percent, pValue, significant } from "../digits";
+import { columnName, listed, rowsName, word } from "../names";
+import { withUnit } from "../scale";
+import { range } from "./difference";
+import type { Voice } from "./difference";
+
+/** What stays open about slopes where one estimate is printed: which modifiers, and how much the data leave open. */
+export function sayUndecided(voice: Voice, set: SetResult): string | null {
+  const open = set.slopes.filter((s) => s.verdict === "cannot tell");
+  if (open.length === 0) return null;
+  const { plan, comparison } = voice;
+  const names = open.map((s) => columnName(s.modifier, plan));
+  const widest = widestOf(open);
+  const start = `Not shown: that this is the same at every ${listed(names, "or")}`;
+  if (!widest) return `${start}; the data do not allow a test.`;
+  const size = Math.max(...widest.change!.interval90.map((v) => Math.abs(shownChange(voice, v))));
+  const error = (shownChange(voice, widest.change!.interval90[1]) - shownChange(voice, widest.change!.interval90[0])) / 3.3;
+  const upTo = withUnit(fixed(size, decimalsFor([error], size)), voice.scale);
+  const where = open.length > 1 ? `across ${columnName(widest.modifier, plan)}` : "across it";
+  const { margin } = comparison.question;
+  const against = margin === null ? "" : size > shownMargin(voice, margin) ? `, more than ${exactly(shownMargin(voice, margin))}` : "";
+  return `${start}; it may change by up to ${upTo} ${where}${against}. The estimate takes the slopes to be equal.`;
+}
+
+/** "Slopes were shown to agree within 150 kWh in floor_m2." */
+export function sayAgreement(voice: Voice, set: SetResult): string | null {
+  const { margin } = voice.comparison.question;
+  const agreeing = set.slopes.filter((s) => s.verdict === "agree").map((s) => columnName(s.modifier, voice.plan));
+  if (margin === null || agreeing.length === 0 || agreeing.length < set.slopes.length) return null;
+  return `Slopes agree within ${withUnit(exactly(shownMargin(voice, margin)), voice.scale)} along ${listed(agreeing)}.`;
+}
+
+/** The headline of a set without a single difference. */
+export function sayVaries({ comparison, plan, outcome, exposure, contrast }: Voice, set: SetResult, modifiers: readonly string[]): string {
+  const { question } = comparison;
+  const tests = modifiers.map((m) => set.slopes.find((s) => s.modifier === m)!);
+  const how = listed(tests.map((t) => `${columnName(t.modifier, plan)}${t.pHolm === null ? "" : ` (${pValue(t.pHolm)})`}`));
+  if (question.kind === "amount") return `There is no single slope of ${outcome} on ${exposure}: it changes with ${how}.`;
+  return `There is no single difference in ${outcome} between ${exposure} = ${word(contrast.level!)} and ${word(question.reference!)}: slopes differ in ${how}.`;
+}
+
+/** The sentences that stand in place of a number: differences at stated values, the crossing, the regions, what to report. */
+export function sayInstead(voice: Voice, readout: VariesReadout, held: string): string[] {
+  const sentences = [sayProfiles(voice, readout, held)];
+  if (readout.crossing) sentences.push(sayCrossing(voice, readout));
+  const surely = sayRegions(voice, readout);
+  if (surely) sentences.push(surely);
+  return sentences;
+}
+
+/** What to report, and both ways on. */
+export function sayWaysOn({ comparison }: Voice): string {
+  const what = comparison.question.kind === "groups" ? "differences" : "slopes";
+  const margin = comparison.question.margin === null ? "state what difference would matter, if small ones do not" : "state a larger difference that would matter, if this one does not";
+  return `Report the ${what} at stated values. Two ways on: ${margin}; or ask for the average over stated rows.`;
+}
+
+function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): string {
+  const { scale } = voice;
+  const decimals = profileDecimals(voice, profiles);
+  const said = profiles.map((profile) => {
+    const interval = profile.interval ? ` (${range(voice, profile.interval, decimals)})` : "";
+    const beyond = profile.supported ? "" : ", where some group has no rows,";
+    return `${fixed(Math.abs(scale.show(profile.estimate)), decimals)} ${scale.show(profile.estimate) < 0 ? "lower" : "higher"}${interval} at ${placeName(voice, profile)}${beyond}`.replace(/,$/, "");
+  });
+  const { comparison, outcome, exposure, contrast } = voice;
+  const who =
+    comparison.question.kind === "groups"
+      ? `${outcome} for ${exposure} = ${word(contrast.level!)} is`
+      : `${outcome} per ${exactly(comparison.question.per)} more of ${exposure} is`;
+  const unit = scale.unit === "" ? "" : ` ${scale.unit}`;
+  const first = said[0] ? said[0].replace(/^(\S+(?: × \S+)?) /, `$1${unit} `) : "";
+  return `${held}, ${who} ${listed([first, ...said.slice(1)])}.`;
+}
+
+function sayCrossing(voice: Voice, { crossing, regions }: VariesReadout): string {
+  const { plan, comparison } = voice;
+  const { modifier, value, interval, below } = crossing!;
+  const name = columnName(modifier, plan);
+  const range = regions.filter((r) => r.band === "pointwise");
+  const [first, last] = [range[0]?.from ?? -Infinity, range[range.length - 1]?.to ?? Infinity];
+  const what = comparison.question.kind === "groups" ? "difference" : "slope";
+  if (value < first || value > last) return `The ${what} does not change sign where every group has rows.`;
+  const level = levelName(comparison.question.level);
+  const at = significant(value);
+  switch (interval.kind) {
+    case "between":
+      return `The ${what} changes sign at ${name} ${at} (${level} interval ${endsOf(interval.low, interval.high)}); ${percent(below)} of the ${rowsName(plan)} lie below it.`;
+    case "outside":
+      return `The ${what} changes sign at ${name} ${at}, but the data only say that it is not between ${endsOf(interval.low, interval.high, "and")}.`;
+    case "everywhere":
+      return `The ${what} is estimated to change sign at ${name} ${at}, but the data do not say where: its ${level} interval is the whole line.`;
+  }
+}
+
+function endsOf(low: number | null, high: number | null, joint = "to"): string {
+  if (low === null) return `up to ${significant(high ?? 0)}`;
+  return high === null ? `${significant(low)} and up` : `${significant(low)} ${joint} ${significant(high)}`;
+}
+
+/** Where the sign is known at all values at once (simultaneous bands). */
+function sayRegions(voice: Voice, { regions }: VariesReadout): string | null {
+  const known = regions.filter((r) => r.band === "simultaneous");
+  if (known.length === 0) return null;
+  const { plan, comparison } = voice;
+  const what = comparison.question.kind === "groups" ? "difference" : "slope";
+  const sure = known.filter((r) => r.sign !== 0);
+  const name = columnName(known[0].modifier, plan);
+  if (sure.length === 0) return `Taken over all of ${name} at once, the data do not settle the sign of the ${what} anywhere.`;
+  const said = sure.map((r) => `${r.sign > 0 ? "above" : "below"} zero ${stretch(r)} (${percent(r.rowsShare)} of the ${rowsName(plan)})`);
+  const rest = sure.length < known.length ? "; elsewhere they do not settle it" : "";
+  return `Taken over all of ${name} at once, the data put the ${what} ${listed(said)}${rest}.`;
+}
+
+function stretch({ from, to }: Region): string {
+  return `from ${significant(from)} to ${significant(to)}`;
+}
+
+/** "wind 1.7", "tenure = owner and floor_m2 60". */
+export function placeName({ plan }: Voice, { where }: Profile): string {
+  return listed(where.map(({ column, value }) => (typeof value === "number" ? `${columnName(column, plan)} ${significant(value)}` : `${columnName(column, plan)} = ${word(value)}`)));
+}
+
+/** Decimals for a list of profile differences. */
+export function profileDecimals({ scale }: Voice, profiles: readonly Profile[]): number {
+  return decimalsFor(
+    profiles.map((p) => scale.showError(p.standardError, p.estimate)),
+    Math.max(0, ...profiles.map((p) => Math.abs(scale.show(p.estimate)))),
+  );
+}
+
+function widestOf(tests: readonly SlopesTest[]): SlopesTest | null {
+  const known = tests.filter((t) => t.change !== null);
+  const size = (t: SlopesTest) => Math.max(...t.change!.interval90.map(Math.abs));
+  return known.length === 0 ? null : known.reduce((a, b) => (size(b) > size(a) ? b : a));
+}
+
+function shownChange({ scale }: Voice, value: number): number {
+  return scale.show(value);
+}
+
+/** A margin on the printed scale: a proportion in points, a ratio − 1 in percent. */
+function shownMargin({ comparison, scale }: Voice, margin: number): number {
+  return comparison.question.outcomeForm === "log" ? 100 * margin : scale.show(margin);
+}
