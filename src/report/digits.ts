@@ -23,7 +23,8 @@ function exponentOf(x: number): number {
 /** A number at a decimal place. `signed` puts + before positive ones. */
 export function fixed(value: number, decimals: number, signed = false): string {
   const size = Math.abs(value);
-  const rounded = decimals >= 0 ? size.toFixed(Math.min(decimals, 100)) : String(Math.round(size / 10 ** -decimals) * 10 ** -decimals);
+  const rounded =
+    decimals >= 0 ? size.toFixed(Math.min(decimals, 100)) : String(Math.round(size / 10 ** -decimals) * 10 ** -decimals);
   const isZero = Number(rounded) === 0;
   const sign = isZero ? "" : value < 0 ? MINUS : signed ? "+" : "";
   if (!isZero && (size >= LARGE || size < SMALL)) return sign + powerOfTen(size, Math.max(1, exponentOf(size) + decimals));
@@ -80,6 +81,8 @@ function trimZeros(digits: string): string {
 }
 
 function powerOfTen(size: number, decimals: number | null): string {
-  const [mantissa, exponent] = (decimals === null ? size.toExponential() : size.toExponential(Math.min(decimals, 100))).split("e");
+  const [mantissa, exponent] = (decimals === null ? size.toExponential() : size.toExponential(Math.min(decimals, 100))).split(
+    "e",
+  );
   return `${mantissa} × 10^${exponent.replace("+", "").replace("-", MINUS)}`;
 }

@@ -14,11 +14,21 @@ export interface Presentation {
   /** Joint test sentence of the exposure, for several groups; null otherwise or where it may not be printed. */
   readonly joint: string | null;
   /** Notes to the data and the fits, one sentence each; `lines` are file lines a person can open. */
-  readonly notes: readonly { readonly code: string; readonly text: string; readonly lines: readonly number[] }[];
+  readonly notes: readonly Note[];
+  /** Which rows were used and what cost the others, one sentence. */
+  readonly rows: string;
   /** "HC3 standard errors; 95 % intervals; heating.csv, sha256 1f2e3d4c…, 2026-12-01" without the date. */
   readonly provenance: readonly string[];
   /** One line for a status bar or a screen reader: headline without caveats. */
   readonly summary: string;
+}
+
+export interface Note {
+  readonly code: string;
+  readonly text: string;
+  readonly lines: readonly number[];
+  /** Changes what the numbers mean, or loses data: never folded away. */
+  readonly important: boolean;
 }
 
 /** `emphasis` marks what must not be missed (a sign that reverses, a refusal). */
@@ -31,7 +41,13 @@ export interface ContrastBlock {
   /** "full − none", or "per 10 dose". */
   readonly contrast: string;
   /** Column heads: "held fixed", "rows", "difference (kWh per winter)", "shift", "in a word". */
-  readonly heads: { readonly held: string; readonly rows: string; readonly difference: string; readonly shift: string; readonly word: string };
+  readonly heads: {
+    readonly held: string;
+    readonly rows: string;
+    readonly difference: string;
+    readonly shift: string;
+    readonly word: string;
+  };
   readonly axis: Axis | null;
   /** Rows to show as a table: every set up to 12; beyond that base, lowest, highest, reported, and those a filter asks for. */
   readonly rows: readonly ShiftRow[];

@@ -26,7 +26,12 @@ export function scaleOf(question: Question, plan: Plan): Scale {
     };
   }
   if (question.outcomeKind === "binary") {
-    return { show: (v) => 100 * v, showError: (e) => (e === null ? null : 100 * e), unit: "percentage points", head: `${what} (percentage points)` };
+    return {
+      show: (v) => 100 * v,
+      showError: (e) => (e === null ? null : 100 * e),
+      unit: "percentage points",
+      head: `${what} (percentage points)`,
+    };
   }
   const unit = plan.outcome.unit ? oneLine(plan.outcome.unit) : "";
   return { show: (v) => v, showError: (e) => e, unit, head: unit ? `${what} (${unit})` : what };

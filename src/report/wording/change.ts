@@ -5,7 +5,12 @@ import { decimalsOf, direction } from "./difference";
 import type { Voice } from "./difference";
 
 /** "Unadjusted it is 340 higher: the sign reverses (Simpson's paradox)." @param base the base set's readout of the same contrast */
-export function sayChange(voice: Voice, own: SingleReadout, base: { estimate: number; standardError: number | null }, baseName: string): string | null {
+export function sayChange(
+  voice: Voice,
+  own: SingleReadout,
+  base: { estimate: number; standardError: number | null },
+  baseName: string,
+): string | null {
   if (!own.shift) return null;
   const was = `${baseName} it is ${direction(voice, base.estimate, decimalsOf(voice, base))}`;
   if (!own.change) return `${was}.`;

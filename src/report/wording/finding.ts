@@ -11,7 +11,8 @@ const LINES = 5;
 export function sayFinding(finding: Finding, { sets }: Pick<Comparison, "sets">, plan: Plan): string {
   const name = (column: string) => columnName(column, plan);
   const names = (columns: readonly string[]) => listed(columns.map(name));
-  const set = (index: number) => (sets[index]?.adjustedFor.length ? `With ${names(sets[index].adjustedFor)} held fixed` : "With nothing held fixed");
+  const set = (index: number) =>
+    sets[index]?.adjustedFor.length ? `With ${names(sets[index].adjustedFor)} held fixed` : "With nothing held fixed";
   switch (finding.code) {
     case "duplicate-header":
       return `The header ${word(finding.original)} occurs again; that column is called ${word(finding.column)}.`;

@@ -27,7 +27,12 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
   const { readout } = contrast;
   switch (readout.kind) {
     case "none":
-      return [{ text: `${held}, there is no ${comparison.question.kind === "groups" ? `difference for ${word(contrast.level!)}` : "slope"}: ${sayReason(readout.reason, plan)}.`, tone: "headline" }];
+      return [
+        {
+          text: `${held}, there is no ${comparison.question.kind === "groups" ? `difference for ${word(contrast.level!)}` : "slope"}: ${sayReason(readout.reason, plan)}.`,
+          tone: "headline",
+        },
+      ];
     case "varies":
       return [
         { text: sayVaries(voice, set, readout.modifiers), tone: "headline" },
@@ -37,13 +42,21 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
       const decimals = decimalsOf(voice, readout);
       return [
         { text: sayVaries(voice, set, readout.modifiers), tone: "headline" },
-        { text: `The plain ${plainName(comparison)} is ${direction(voice, readout.estimate, decimals)} ${comparedGroups(voice)} ${intervalPhrase(voice, readout, decimals)}; it belongs to the rows as they are mixed here.`, tone: "plain" },
+        {
+          text: `The plain ${plainName(comparison)} is ${direction(voice, readout.estimate, decimals)} ${comparedGroups(voice)} ${intervalPhrase(voice, readout, decimals)}; it belongs to the rows as they are mixed here.`,
+          tone: "plain",
+        },
       ];
     }
     case "single":
     case "undecided": {
       const decimals = decimalsOf(voice, readout);
-      const sentences: Sentence[] = [{ text: `${held}, ${sayEstimate(voice, readout.estimate, decimals)} ${intervalPhrase(voice, readout, decimals)}.`, tone: "headline" }];
+      const sentences: Sentence[] = [
+        {
+          text: `${held}, ${sayEstimate(voice, readout.estimate, decimals)} ${intervalPhrase(voice, readout, decimals)}.`,
+          tone: "headline",
+        },
+      ];
       const base = comparison.sets[0].contrasts[i].readout;
       if (readout.shift && base.kind !== "varies" && base.kind !== "none") {
         const baseHeld = comparison.sets[0].adjustedFor;
@@ -60,7 +73,9 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
 function sayEstimate(voice: Voice, estimate: number, decimals: number): string {
   const { comparison, outcome } = voice;
   const size = direction(voice, estimate, decimals);
-  return comparison.question.design === "randomised" ? `the estimated effect is ${outcome} ${size} ${comparedGroups(voice)}` : `${outcome} is ${size} ${comparedGroups(voice)}`;
+  return comparison.question.design === "randomised"
+    ? `the estimated effect is ${outcome} ${size} ${comparedGroups(voice)}`
+    : `${outcome} is ${size} ${comparedGroups(voice)}`;
 }
 
 /** What the base set's number is called where slopes differ. */

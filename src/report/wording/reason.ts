@@ -8,7 +8,9 @@ export function sayReason(reason: Reason, plan: Plan): string {
   const names = (columns: readonly string[]) => listed(columns.map((c) => columnName(c, plan)));
   switch (reason.code) {
     case "no-rows":
-      return reason.columns.length > 0 ? `no ${rowsName(plan)} are complete; cells are missing in ${names(reason.columns)}` : `there are no ${rowsName(plan)}`;
+      return reason.columns.length > 0
+        ? `no ${rowsName(plan)} are complete; cells are missing in ${names(reason.columns)}`
+        : `there are no ${rowsName(plan)}`;
     case "too-few-rows":
       return `${count(reason.rows)} ${rowsName(plan)} are too few for ${count(reason.coefficients)} coefficients`;
     case "outcome-constant":

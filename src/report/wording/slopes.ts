@@ -19,7 +19,8 @@ export function sayUndecided(voice: Voice, set: SetResult): string | null {
   const upTo = withUnit(fixed(size, decimalsFor([error], size)), voice.scale);
   const where = open.length > 1 ? `across ${columnName(widest.modifier, plan)}` : "across it";
   const { margin } = comparison.question;
-  const against = margin === null ? "" : size > shownMargin(voice, margin) ? `, more than ${exactly(shownMargin(voice, margin))}` : "";
+  const against =
+    margin === null ? "" : size > shownMargin(voice, margin) ? `, more than ${exactly(shownMargin(voice, margin))}` : "";
   return `${start}; it may change by up to ${upTo} ${where}${against}. The estimate takes the slopes to be equal.`;
 }
 
@@ -32,7 +33,11 @@ export function sayAgreement(voice: Voice, set: SetResult): string | null {
 }
 
 /** The headline of a set without a single difference. */
-export function sayVaries({ comparison, plan, outcome, exposure, contrast }: Voice, set: SetResult, modifiers: readonly string[]): string {
+export function sayVaries(
+  { comparison, plan, outcome, exposure, contrast }: Voice,
+  set: SetResult,
+  modifiers: readonly string[],
+): string {
   const { question } = comparison;
   const tests = modifiers.map((m) => set.slopes.find((s) => s.modifier === m)!);
   const how = listed(tests.map((t) => `${columnName(t.modifier, plan)}${t.pHolm === null ? "" : ` (${pValue(t.pHolm)})`}`));
@@ -52,7 +57,10 @@ export function sayInstead(voice: Voice, readout: VariesReadout, held: string): 
 /** What to report, and both ways on. */
 export function sayWaysOn({ comparison }: Voice): string {
   const what = comparison.question.kind === "groups" ? "differences" : "slopes";
-  const margin = comparison.question.margin === null ? "state what difference would matter, if small ones do not" : "state a larger difference that would matter, if this one does not";
+  const margin =
+    comparison.question.margin === null
+      ? "state what difference would matter, if small ones do not"
+      : "state a larger difference that would matter, if this one does not";
   return `Report the ${what} at stated values. Two ways on: ${margin}; or ask for the average over stated rows.`;
 }
 
@@ -62,7 +70,10 @@ function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): s
   const said = profiles.map((profile) => {
     const interval = profile.interval ? ` (${range(voice, profile.interval, decimals)})` : "";
     const beyond = profile.supported ? "" : ", where some group has no rows,";
-    return `${fixed(Math.abs(scale.show(profile.estimate)), decimals)} ${scale.show(profile.estimate) < 0 ? "lower" : "higher"}${interval} at ${placeName(voice, profile)}${beyond}`.replace(/,$/, "");
+    return `${fixed(Math.abs(scale.show(profile.estimate)), decimals)} ${scale.show(profile.estimate) < 0 ? "lower" : "higher"}${interval} at ${placeName(voice, profile)}${beyond}`.replace(
+      /,$/,
+      "",
+    );
   });
   const { comparison, outcome, exposure, contrast } = voice;
   const who =
@@ -108,7 +119,9 @@ function sayRegions(voice: Voice, { regions }: VariesReadout): string | null {
   const sure = known.filter((r) => r.sign !== 0);
   const name = columnName(known[0].modifier, plan);
   if (sure.length === 0) return `Taken over all of ${name} at once, the data do not settle the sign of the ${what} anywhere.`;
-  const said = sure.map((r) => `${r.sign > 0 ? "above" : "below"} zero ${stretch(r)} (${percent(r.rowsShare)} of the ${rowsName(plan)})`);
+  const said = sure.map(
+    (r) => `${r.sign > 0 ? "above" : "below"} zero ${stretch(r)} (${percent(r.rowsShare)} of the ${rowsName(plan)})`,
+  );
   const rest = sure.length < known.length ? "; elsewhere they do not settle it" : "";
   return `Taken over all of ${name} at once, the data put the ${what} ${listed(said)}${rest}.`;
 }
@@ -119,7 +132,13 @@ function stretch({ from, to }: Region): string {
 
 /** "wind 1.7", "tenure = owner and floor_m2 60". */
 export function placeName({ plan }: Voice, { where }: Profile): string {
-  return listed(where.map(({ column, value }) => (typeof value === "number" ? `${columnName(column, plan)} ${significant(value)}` : `${columnName(column, plan)} = ${word(value)}`)));
+  return listed(
+    where.map(({ column, value }) =>
+      typeof value === "number"
+        ? `${columnName(column, plan)} ${significant(value)}`
+        : `${columnName(column, plan)} = ${word(value)}`,
+    ),
+  );
 }
 
 /** Decimals for a list of profile differences. */
