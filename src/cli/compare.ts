@@ -16,7 +16,7 @@ import type { Question } from "./question";
 import { Refusal } from "./refusal";
 import { say } from "./sentences";
 import type { Format } from "./values";
-import { writeFile } from "./write";
+import { checkPlace, writeFile } from "./write";
 
 /** What `compare` has to say: `out` for stdout (empty where it went to a file), `aside` for stderr. */
 export interface Said {
@@ -36,10 +36,11 @@ export function runCompare({ positionals: [path], values }: Arguments): Said {
   const [problem] = checkPlan(table, question.plan, parsed);
   if (problem) throw refusal(located(problem));
 
+  const to = values.get("to") as string | undefined;
+  if (to !== undefined) checkPlace(to, files);
   const format = (values.get("as") ?? "text") as Format;
   const out = written(compare(table, question.plan), question, format);
   const aside = question.filledIn.length > 0 ? say.guessed(question.filledIn) + "\n" : "";
-  const to = values.get("to") as string | undefined;
   if (to === undefined) return { out, aside };
   writeFile(to, out, files);
   return { out: "", aside };
@@ -55,7 +56,7 @@ function written(comparison: Comparison, { plan, guessed }: Question, format: Fo
     case "markdown":
       return ended(toMarkdown(presentation(), comparison, { date: dateOf(new Date(), process.env["SOURCE_DATE_EPOCH"]) }));
     case "text":
-      return ended(toText(presentation(), comparison));
+      return ended(toText(presentation()));
   }
 }
 

@@ -12,9 +12,7 @@ import { say } from "./sentences";
  * @throws Refusal
  */
 export function writeFile(path: string, text: string, inputs: readonly string[]): void {
-  const before = attempt(path, () => statusOf(path));
-  if (before?.isDirectory()) throw new Refusal(say.toFolder(path));
-  if (before && inputs.some((input) => isSame(before, statusOf(input)))) throw new Refusal(say.overInput(path));
+  const before = checkPlace(path, inputs);
   if (before && !before.isFile()) return attempt(path, () => writeFileSync(path, text));
   const target = before ? realpathSync(path) : path;
   const draft = join(dirname(target), `.${basename(target).slice(0, 60)}.${randomBytes(6).toString("hex")}.tmp`);
@@ -27,6 +25,17 @@ export function writeFile(path: string, text: string, inputs: readonly string[])
   } finally {
     rmSync(draft, { force: true });
   }
+}
+
+/**
+ * What stands at a place that is to be written to, if anything: known before a long comparison, not after it.
+ * @throws Refusal where it is a folder or one of the inputs
+ */
+export function checkPlace(path: string, inputs: readonly string[]): Stats | undefined {
+  const before = attempt(path, () => statusOf(path));
+  if (before?.isDirectory()) throw new Refusal(say.toFolder(path));
+  if (before && inputs.some((input) => isSame(before, statusOf(input)))) throw new Refusal(say.overInput(path));
+  return before;
 }
 
 function attempt<T>(path: string, act: () => T): T {
