@@ -1,6 +1,7 @@
+import { applyChange } from "../plan/change";
 import type { PanelState, PlanChange, QuestionState, Reading, SetFilter } from "../protocol";
 import type { Presentation } from "../report/presentation";
-import { choose, settlesGuess } from "./choose";
+import { settlesGuess } from "./choose";
 import { GRACE_MS } from "./quiet";
 import type { Chosen, PlanText, SessionParts } from "./sessionParts";
 import { statusOf } from "./status";
@@ -121,7 +122,7 @@ export class Session {
   choose(change: PlanChange): void {
     if (!this.question) return;
     const guessed = this.question.guessed && !settlesGuess(change);
-    this.chosen = { plan: choose(this.question.plan, change), guessed };
+    this.chosen = { plan: applyChange(this.question.plan, change), guessed };
     // shown at once, so that the next choice builds on this one
     this.question = { ...this.question, plan: this.chosen.plan, guessed };
     this.shown = null;

@@ -1,9 +1,9 @@
 import { readdir, readFile, stat } from "node:fs/promises";
-import { basename, dirname, isAbsolute, join, relative, resolve, sep } from "node:path";
-import { parsePlan } from "../plan/parse";
+import { basename, dirname, join, resolve } from "node:path";
+import { parsePlan, PLAN_LIMIT } from "../plan/parse";
+import { resolveData } from "../plan/resolve";
 
 const PLAN_SUFFIX = ".slantwise.json";
-const PLAN_LIMIT = 1_000_000;
 /** More plans than this in a folder are not searched for the one about a CSV. */
 const PLANS_SEARCHED = 50;
 
@@ -51,12 +51,6 @@ async function dataOf(plan: string): Promise<string | null> {
  * came with somebody's repository must not read elsewhere.
  */
 export function dataPath(plan: string, data: string, folders: readonly string[]): string | null {
-  if (isAbsolute(data)) return null;
-  const path = resolve(dirname(plan), data);
-  const roots = [dirname(plan), ...folders];
-  const inside = (root: string, file: string) => {
-    const way = relative(root, file);
-    return way !== "" && way !== ".." && !way.startsWith(".." + sep) && !isAbsolute(way);
-  };
-  return roots.some((root) => inside(root, path)) ? path : null;
+  const resolved = resolveData(plan, data, [dirname(plan), ...folders]);
+  return resolved.ok ? resolved.path : null;
 }

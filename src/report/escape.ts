@@ -1,21 +1,27 @@
 /**
- * Text that shows as itself in Markdown: everything Markdown or HTML would act on becomes a character reference, which no renderer reads
- * as markup. Line breaks become spaces.
+ * Text that shows as itself inside a table cell or a paragraph: what Markdown or HTML would act on becomes a character reference, which no
+ * renderer reads as markup. Line breaks become spaces. An underscore inside a word is left alone, as every renderer leaves it.
  */
 export function escapeMarkdown(text: string): string {
   return (
     text
       .replace(/[\r\n\u2028\u2029]+/g, " ")
-      // eslint-disable-next-line no-control-regex
+       
       .replace(/[\u0000-\u0008\u000b-\u001f\u007f]/g, "")
-      .replace(/[&<>|`*_[\]\\~$#^{}!]/g, reference)
-      .replace(/^(\s*)([=+\-@])/, (_, space: string, c: string) => space + reference(c))
-      .replace(/^(\s*\d+)([.)])(?=\s|$)/, (_, digits: string, c: string) => digits + reference(c))
+      .replace(/[&<>|`*[\]\\~$#^{}]|!(?=\[)/g, reference)
+      .replace(/(?<![\p{L}\p{N}])_|_(?![\p{L}\p{N}])/gu, reference)
       .replace(/--/g, "-&#45;")
-      .replace(/:(?=[a-z0-9+-]+:)/gi, reference)
+      .replace(/:(?=[a-z0-9_+-]+:)/gi, reference)
       .replace(/\b(https?|ftp|mailto|www)([:.])/gi, (_, scheme: string, c: string) => scheme + reference(c))
       .replace(/(\S)@(?=\S)/g, (_, before: string) => before + reference("@"))
   );
+}
+
+/** The same for text that starts a paragraph or a list item, where a leading mark would make a heading, list or quote. */
+export function escapeParagraph(text: string): string {
+  return escapeMarkdown(text)
+    .replace(/^(\s*)([=+\-])/, (_, space: string, c: string) => space + reference(c))
+    .replace(/^(\s*\d+)([.)])(?=\s|$)/, (_, digits: string, c: string) => digits + reference(c));
 }
 
 function reference(c: string): string {
@@ -24,7 +30,7 @@ function reference(c: string): string {
 
 /** Text for a terminal or a tab-separated cell: no line breaks, tabs or control characters. */
 export function escapePlain(text: string): string {
-  // eslint-disable-next-line no-control-regex
+   
   return text.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ");
 }
 

@@ -1,5 +1,5 @@
 import type { Comparison } from "../engine/comparison";
-import { escapeMarkdown } from "./escape";
+import { escapeMarkdown, escapeParagraph } from "./escape";
 import type { ContrastBlock, Presentation } from "./presentation";
 
 export interface MarkdownOptions {
@@ -10,16 +10,16 @@ export interface MarkdownOptions {
 /** The comparison as a person would paste it in a report: the sentences, one table a contrast, and where it came from. */
 export function toMarkdown(presentation: Presentation, comparison: Comparison, { date }: MarkdownOptions): string {
   const several = presentation.blocks.length > 1;
-  const paragraphs = [presentation.readout.map((s) => escapeMarkdown(s.text)).join(" ")];
-  if (presentation.joint) paragraphs.push(escapeMarkdown(presentation.joint));
+  const paragraphs = [escapeParagraph(presentation.readout.map((s) => s.text).join(" "))];
+  if (presentation.joint) paragraphs.push(escapeParagraph(presentation.joint));
   for (const block of presentation.blocks) {
     if (several) paragraphs.push(`**${escapeMarkdown(block.contrast)}**`);
     paragraphs.push(table(block));
-    if (block.strip) paragraphs.push(escapeMarkdown(`${block.rows.length} of ${comparison.sets.length} sets are shown.`));
+    if (block.strip) paragraphs.push(escapeParagraph(`${block.rows.length} of ${comparison.sets.length} sets are shown.`));
   }
   const important = presentation.notes.filter((note) => note.important);
-  if (important.length > 0) paragraphs.push(important.map((note) => `- ${escapeMarkdown(note.text)}`).join("\n"));
-  paragraphs.push(escapeMarkdown(`${presentation.rows} ${[...presentation.provenance, date].join("; ")}.`));
+  if (important.length > 0) paragraphs.push(important.map((note) => `- ${escapeParagraph(note.text)}`).join("\n"));
+  paragraphs.push(escapeParagraph(`${presentation.rows} ${[...presentation.provenance, date].join("; ")}.`));
   return `${paragraphs.join("\n\n")}\n`;
 }
 

@@ -23,6 +23,7 @@ export const presentation = (title: string): Presentation => ({
   blocks: [],
   joint: null,
   notes: [],
+  rows: "",
   provenance: [],
   summary: title,
 });

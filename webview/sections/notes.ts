@@ -5,17 +5,6 @@ import { head } from "./head";
 
 type Note = NonNullable<View["state"]["presentation"]>["notes"][number];
 
-/** Notes that change what the numbers mean or lose data: never folded away. */
-const PLAIN_TO_SEE = new Set([
-  "unreadable-cells",
-  "beyond-double-range",
-  "long-rows",
-  "log-not-positive",
-  "after-exposure",
-  "clusters-ignored",
-  "standard-error-missing",
-  "base-varies",
-]);
 /** Lines offered a note; more would bury the sentence. */
 const LINES = 8;
 
@@ -24,8 +13,8 @@ export function drawNotes(part: HTMLElement, { state, post, isOpen, setOpen }: V
   const notes = state.presentation?.notes ?? [];
   part.hidden = notes.length === 0;
   redraw(part, notes, () => {
-    const plain = notes.filter(({ code }) => PLAIN_TO_SEE.has(code));
-    const folded = notes.filter(({ code }) => !PLAIN_TO_SEE.has(code));
+    const plain = notes.filter(({ important }) => important);
+    const folded = notes.filter(({ important }) => !important);
     const list = (items: readonly Note[]) =>
       el("ul", { class: "notes" }, ...items.map((note) => el("li", {}, note.text, lines(note))));
     const lines = (note: Note) =>

@@ -4,13 +4,14 @@ import type { Table } from "../../engine/table";
 import { naturalCompare } from "../../engine/question/natural";
 import { describeColumns } from "../../plan/describe";
 import type { QuestionState } from "../../protocol";
+import { sayRoles } from "../../report/wording/role";
 
 /** What the Question section shows: the plan, the columns it may choose from, and how the engine took it (if it could). */
 export function questionState(table: Table, plan: Plan, guessed: boolean, comparison: Comparison | null): QuestionState {
   return {
     plan,
     guessed,
-    columns: describeColumns(table),
+    columns: describeColumns(table).map(sayRoles),
     levels: exposureLevels(table, plan, comparison),
     reference: comparison?.question.reference ?? null,
     kind: comparison?.question.kind ?? plan.exposure.kind ?? "groups",
