@@ -3,18 +3,16 @@
  * renderer reads as markup. Line breaks become spaces. An underscore inside a word is left alone, as every renderer leaves it.
  */
 export function escapeMarkdown(text: string): string {
-  return (
-    text
-      .replace(/[\r\n\u2028\u2029]+/g, " ")
-       
-      .replace(/[\u0000-\u0008\u000b-\u001f\u007f]/g, "")
-      .replace(/[&<>|`*[\]\\~$#^{}]|!(?=\[)/g, reference)
-      .replace(/(?<![\p{L}\p{N}])_|_(?![\p{L}\p{N}])/gu, reference)
-      .replace(/--/g, "-&#45;")
-      .replace(/:(?=[a-z0-9_+-]+:)/gi, reference)
-      .replace(/\b(https?|ftp|mailto|www)([:.])/gi, (_, scheme: string, c: string) => scheme + reference(c))
-      .replace(/(\S)@(?=\S)/g, (_, before: string) => before + reference("@"))
-  );
+  return text
+    .replace(/[\r\n\u2028\u2029]+/g, " ")
+
+    .replace(/[\u0000-\u0008\u000b-\u001f\u007f]/g, "")
+    .replace(/[&<>|`*[\]\\~$#^{}]|!(?=\[)/g, reference)
+    .replace(/(?<![\p{L}\p{N}])_|_(?![\p{L}\p{N}])/gu, reference)
+    .replace(/--/g, "-&#45;")
+    .replace(/:(?=[a-z0-9_+-]+:)/gi, reference)
+    .replace(/\b(https?|ftp|mailto|www)([:.])/gi, (_, scheme: string, c: string) => scheme + reference(c))
+    .replace(/(\S)@(?=\S)/g, (_, before: string) => before + reference("@"));
 }
 
 /** The same for text that starts a paragraph or a list item, where a leading mark would make a heading, list or quote. */
@@ -30,7 +28,6 @@ function reference(c: string): string {
 
 /** Text for a terminal or a tab-separated cell: no line breaks, tabs or control characters. */
 export function escapePlain(text: string): string {
-   
   return text.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ");
 }
 

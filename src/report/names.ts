@@ -18,7 +18,6 @@ export function word(name: string): string {
 
 /** Line breaks and other control characters would tear a sentence: they become spaces. */
 export function oneLine(name: string): string {
-   
   return name.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ").trim();
 }
 

@@ -8,9 +8,7 @@ export function emptyResult(resolved: Resolved, adjustedFor: readonly string[], 
   const names =
     exposure.kind === "amount"
       ? [{ contrast: `per ${exposure.per} ${exposure.column}`, level: null }]
-      : exposure.groups.levels
-          .filter((level) => level !== exposure.reference)
-          .map((level) => ({ contrast: `${level} − ${exposure.reference}`, level }));
+      : otherLevels(exposure.groups.levels, exposure.reference);
   return {
     adjustedFor,
     ownRows,
@@ -21,4 +19,12 @@ export function emptyResult(resolved: Resolved, adjustedFor: readonly string[], 
     model: [],
     setAside: [],
   };
+}
+
+/** One contrast a level beyond the reference; where there is none, the exposure itself stands in, so that the reason has its place. */
+function otherLevels(levels: readonly string[], reference: string): { contrast: string; level: string | null }[] {
+  const others = levels.filter((level) => level !== reference);
+  return others.length > 0
+    ? others.map((level) => ({ contrast: `${level} − ${reference}`, level }))
+    : [{ contrast: reference, level: null }];
 }

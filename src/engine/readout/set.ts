@@ -30,7 +30,8 @@ export function fitSet(design: Design, factor: Factor, columns: readonly string[
   const wanted = [0, ...before, ...exposure];
   const first = fitColumns(factor, wanted);
   const owner = ownerOf(design);
-  const short = first.residualDf < 0 || frame.n < wanted.length - first.setAside.length;
+  // Rows used up before the exposure's turn: what looks like a dependence is want of rows.
+  const short = first.residualDf <= 0 && first.setAside.some(({ column }) => exposure.includes(column));
   const clusters = variance === "CR1" || variance === "CR2" ? (frame.clusters?.count ?? 0) : null;
   const enough = first.residualDf > 0 && (clusters === null || clusters > 1);
   const fit = enough ? refine(frame, first) : first;

@@ -46,7 +46,12 @@ export function shiftOf({ design, factor, base, full, contrast, names, level, df
 }
 
 function contrastInfluence(design: Design, { fit, cov }: Fitted, contrast: ContrastColumn): Float64Array {
-  return influence(design.frame, fit, cov, Float64Array.from(fit.columns, (c) => (c === contrast.column ? contrast.factor : 0)));
+  return influence(
+    design.frame,
+    fit,
+    cov,
+    Float64Array.from(fit.columns, (c) => (c === contrast.column ? contrast.factor : 0)),
+  );
 }
 
 const known = new WeakMap<Fitted["cov"], Map<number, Float64Array>>();
