@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { compare } from "../../src/engine/compare";
 import { Cancelled } from "../../src/engine/cancelled";
-import type { Comparison, Readout } from "../../src/engine/comparison";
+import type { Comparison, Readout, Shift, SingleReadout } from "../../src/engine/comparison";
 import { relativeError, TOLERANCE } from "../tolerances";
 import { planOf, seeded, tableOf } from "./fixtures";
 
@@ -53,7 +53,7 @@ describe("compare", () => {
 
   it("parts of a shift sum to it", () => {
     const found = compare(tableOf(data), plan);
-    const { shift } = first(found, 3) as { shift: { estimate: number; parts: { estimate: number }[] } };
+    const { shift } = first(found, 3) as SingleReadout as { shift: Shift };
     const sum = shift.parts.reduce((total, part) => total + part.estimate, 0);
     expect(relativeError(sum, shift.estimate)).toBeLessThan(TOLERANCE.sum);
   });
