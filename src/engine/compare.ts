@@ -26,7 +26,9 @@ export interface CompareOptions {
   readonly cancelled?: () => boolean;
 }
 
-/** Parts, table errors and own-rows fits of every set are computed up to this many rows times sets; beyond it for the sets shown. */
+/** Up to this many rows times sets, every set is fitted on its own rows too; beyond it the base and the reported set. */
+const OWN_ROWS = 2e5;
+/** Parts and table errors of every set are computed up to this many rows times sets; beyond it for the sets shown. */
 const IN_FULL = 2e6;
 
 /**
@@ -55,6 +57,7 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
   const factor = factorise(design.frame, cancelled);
   const all = rows.common.length * resolved.sets.length <= IN_FULL;
   const inFull = (i: number) => all || i === resolved.reported || i === 0;
+  const small = rows.common.length * resolved.sets.length <= OWN_ROWS;
   const judged = resolved.sets.map((_, i): Judged => {
     stopIf(cancelled);
     return judge(resolved, design, factor, i, inFull(i));
@@ -71,7 +74,10 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
       judged: own,
       isBase: i === 0,
       ownRows: ownRows.length,
-      ownEstimates: full && ownRows.length !== rows.common.length ? ownEstimates(resolved, ownRows, resolved.sets[i]) : null,
+      ownEstimates:
+        full && ownRows.length !== rows.common.length && (small || i === 0 || i === resolved.reported)
+          ? ownEstimates(resolved, ownRows, resolved.sets[i])
+          : null,
       inFull: full,
     });
   });
@@ -85,6 +91,7 @@ function judge(resolved: Resolved, design: Design, factor: Factor, i: number, in
   const slopes = readSlopes({
     design,
     factor,
+    start: set.cov && { fit: set.fit, cov: set.cov },
     set: resolved.sets[i],
     setIndex: i,
     modifiers: estimable ? modifiers : [],

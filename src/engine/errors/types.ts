@@ -20,6 +20,9 @@ export interface Covariance {
   readonly clustered: Clustered | null;
 }
 
+/** What tests and intervals need of a covariance, without the rows it came from. */
+export type CoefficientErrors = Pick<Covariance, "kind" | "used" | "matrix" | "dfOf" | "clustered">;
+
 /** Sums over clusters that CR1 and CR2 are made of; all vectors in whitened coordinates (combination c ↦ t = R⁻ᵀ-free t = P'c, P = R⁻¹). */
 export interface Clustered {
   readonly count: number;

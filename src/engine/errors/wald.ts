@@ -3,7 +3,7 @@ import type { Fit, Frame } from "../linear/types";
 import { fUpper, tTwoSided } from "../probability";
 import { quadratic, transposedTimes } from "./quadratic";
 import { hotellingDf } from "./satterthwaite";
-import type { Covariance } from "./types";
+import type { CoefficientErrors } from "./types";
 
 /** Eigenvalues of the scaled covariance of the combinations below this share of the largest count as 0. */
 const RANK = 1e-11;
@@ -20,7 +20,7 @@ export interface WaldTest {
  * Null where no test exists (no variance, no degrees of freedom).
  * @param combinations each of length p, aligned with fit.columns
  */
-export function wald(frame: Frame, fit: Fit, cov: Covariance, combinations: readonly Float64Array[]): WaldTest | null {
+export function wald(frame: Frame, fit: Fit, cov: CoefficientErrors, combinations: readonly Float64Array[]): WaldTest | null {
   const b = combinations.map((c) => dot(c, fit.coefficients));
   const sizes = combinations.map((c) => Math.sqrt(quadratic(cov.matrix, c, c)));
   if (combinations.length === 0 || sizes.some((s) => !(s > 0))) return null;
@@ -51,7 +51,7 @@ export function wald(frame: Frame, fit: Fit, cov: Covariance, combinations: read
   return finish(statistic / q, q, df2);
 }
 
-function single(cov: Covariance, combination: Float64Array, b: number, size: number): WaldTest | null {
+function single(cov: CoefficientErrors, combination: Float64Array, b: number, size: number): WaldTest | null {
   const df = cov.dfOf(combination);
   if (df === null) return null;
   const t = b / size;
@@ -59,7 +59,7 @@ function single(cov: Covariance, combination: Float64Array, b: number, size: num
   return Number.isFinite(t * t) ? { statistic: t * t, df: [1, df], p } : null;
 }
 
-function hotelling(fit: Fit, cov: Covariance, directions: readonly Float64Array[], q2: number): WaldTest | null {
+function hotelling(fit: Fit, cov: CoefficientErrors, directions: readonly Float64Array[], q2: number): WaldTest | null {
   const q = directions.length;
   const clustered = cov.clustered!;
   const ts = orthonormal(

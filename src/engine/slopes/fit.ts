@@ -1,8 +1,10 @@
 import type { ContrastColumn, Design } from "../design/types";
+import { addedErrors } from "../errors/added";
 import { covariance } from "../errors/covariance";
 import type { Scratch } from "../errors/covariance";
 import { quadratic } from "../errors/quadratic";
 import { fitColumns } from "../linear/fit";
+import type { Fit } from "../linear/types";
 import { tCritical } from "../probability";
 import type { InteractionFit, SlopesInput } from "./types";
 
@@ -13,18 +15,44 @@ export interface Combined {
   readonly df: number | null;
 }
 
-/** The set, the modifiers and the exposure's products with them, fitted from R; errors for the exposure's columns and the products. */
-export function fitInteraction({ design, factor, set, variance }: SlopesInput, modifiers: readonly string[]): InteractionFit {
-  const names = [...new Set([...set, ...modifiers])];
+/**
+ * The set, one modifier and the exposure's products with it, for testing: errors for the products alone, carried on from the set's own fit
+ * where the kind of errors allows.
+ */
+export function fitTrial(input: SlopesInput, modifier: string): InteractionFit {
+  const { design, factor, set, start, variance } = input;
+  const extra = set.includes(modifier) ? [] : design.covariates.get(modifier)!.columns;
+  const products = design.interactions.get(modifier)!.columns.flat();
+  const fit = fitColumns(factor, [0, ...columnsOf(design, set), ...exposureColumns(design), ...extra, ...products]);
+  const modifiers = [modifier];
+  if (!hasErrors(input, fit)) return { fit, cov: null, modifiers };
+  const added = start && addedErrors(design.frame, start, fit, variance);
+  if (added) return { fit, cov: added, modifiers };
+  const from = fit.columns.findIndex((c) => products.includes(c));
+  return { fit, cov: from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null, modifiers };
+}
+
+/** The set, the modifiers and the exposure's products with them, for readouts: errors for the exposure's columns and the products. */
+export function fitInteraction(input: SlopesInput, modifiers: readonly string[]): InteractionFit {
+  const { design, factor, set, variance } = input;
   const products = modifiers.flatMap((name) => design.interactions.get(name)!.columns.flat());
-  const exposure = design.contrasts.map((c) => c.column).filter((c) => c >= 0);
-  const before = names.flatMap((name) => design.covariates.get(name)!.columns);
-  const fit = fitColumns(factor, [0, ...before, ...exposure, ...products]);
-  const enough =
-    fit.residualDf > 0 && (design.frame.clusters === null || !variance.startsWith("CR") || design.frame.clusters.count > 1);
+  const exposure = exposureColumns(design);
+  const fit = fitColumns(factor, [0, ...columnsOf(design, [...new Set([...set, ...modifiers])]), ...exposure, ...products]);
   const from = fit.columns.findIndex((c) => exposure.includes(c) || products.includes(c));
-  const cov = enough && from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null;
+  const cov = hasErrors(input, fit) && from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null;
   return { fit, cov, modifiers };
+}
+
+function hasErrors({ design, variance }: SlopesInput, fit: Fit): boolean {
+  return fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1);
+}
+
+function columnsOf(design: Design, names: readonly string[]): number[] {
+  return names.flatMap((name) => design.covariates.get(name)!.columns);
+}
+
+function exposureColumns(design: Design): number[] {
+  return design.contrasts.map((c) => c.column).filter((c) => c >= 0);
 }
 
 const scratches = new WeakMap<Design, Scratch>();

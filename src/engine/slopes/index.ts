@@ -13,13 +13,13 @@ export type { InteractionFit, SlopesInput, SlopesOutcome } from "./types";
  * stated values, the crossing, the regions. Nothing here carries a common slope.
  */
 export function readSlopes(input: SlopesInput): SlopesOutcome {
-  const { tests, findings, fits } = testSlopes(input);
+  const { tests, findings } = testSlopes(input);
   const differing = tests.filter((t) => t.verdict === "differ").map((t) => t.modifier);
   if (differing.length === 0) {
     const kind = tests.some((t) => t.verdict === "cannot tell") ? "undecided" : "single";
     return { tests, kind, differing, varies: null, findings };
   }
-  const joint = differing.length === 1 ? fits.get(differing[0])! : fitInteraction(input, differing);
+  const joint = fitInteraction(input, differing);
   return { tests, kind: "varies", differing, varies: { perContrast: readContrasts(input, joint), joint }, findings };
 }
 

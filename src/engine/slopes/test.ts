@@ -4,7 +4,7 @@ import type { Finding } from "../findings";
 import { marginBounds, within } from "../shift/word";
 import { changesOf } from "./change";
 import type { Changes } from "./change";
-import { fitInteraction } from "./fit";
+import { fitTrial } from "./fit";
 import { holm } from "./holm";
 import type { InteractionFit, SlopesInput } from "./types";
 
@@ -23,13 +23,10 @@ interface Trial {
 export function testSlopes(input: SlopesInput): {
   tests: SlopesTest[];
   findings: Finding[];
-  fits: ReadonlyMap<string, InteractionFit>;
 } {
   const findings: Finding[] = [];
-  const fits = new Map<string, InteractionFit>();
   const trials = input.modifiers.map((modifier): Trial => {
-    const interaction = fitInteraction(input, [modifier]);
-    fits.set(modifier, interaction);
+    const interaction = fitTrial(input, modifier);
     const trial = tryModifier(input, modifier, interaction);
     const { setIndex: set } = input;
     if (!hasProducts(input, modifier, interaction)) findings.push({ code: "interaction-not-estimable", set, modifier });
@@ -54,7 +51,7 @@ export function testSlopes(input: SlopesInput): {
       verdict,
     };
   });
-  return { tests, findings, fits };
+  return { tests, findings };
 }
 
 function tryModifier(input: SlopesInput, modifier: string, interaction: InteractionFit): Trial {

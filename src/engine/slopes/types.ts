@@ -1,6 +1,7 @@
 import type { SlopesTest, VariesReadout } from "../comparison";
 import type { Design } from "../design/types";
-import type { Covariance } from "../errors/types";
+import type { Start } from "../errors/added";
+import type { CoefficientErrors } from "../errors/types";
 import type { Finding } from "../findings";
 import type { Factor, Fit } from "../linear/types";
 import type { Plan, Variance } from "../plan";
@@ -9,6 +10,8 @@ import type { Plan, Variance } from "../plan";
 export interface SlopesInput {
   readonly design: Design;
   readonly factor: Factor;
+  /** The set's own fit with its errors, which the tests build on; null where it has none. */
+  readonly start: Start | null;
   /** Covariates of the set. */
   readonly set: readonly string[];
   readonly setIndex: number;
@@ -34,7 +37,7 @@ export interface SlopesOutcome {
 /** A fit that holds the set, some modifiers and their products with the exposure. */
 export interface InteractionFit {
   readonly fit: Fit;
-  /** Null where the fit has no residual degrees of freedom; filled from the exposure's columns on. */
-  readonly cov: Covariance | null;
+  /** Null where the fit has no residual degrees of freedom; filled from the exposure's columns on, or for the products alone. */
+  readonly cov: CoefficientErrors | null;
   readonly modifiers: readonly string[];
 }
