@@ -1,3 +1,4 @@
+import { combineColumns, triangleColumns } from "../linear/combine";
 import { ROW_BLOCK } from "../linear/rows";
 import type { Fit, Frame } from "../linear/types";
 import type { Variance } from "../plan";
@@ -14,20 +15,20 @@ export interface Start {
 /**
  * Errors of the coefficients that a fit has beyond a smaller one it begins with (the same first columns): leverages and residuals are carried
  * on from the smaller fit by the few new orthonormal columns, so a test of added columns costs a fraction of a fit's own pass.
- * The matrix is filled for the new columns only. Null where the fits do not nest so, or the kind needs clusters: use `covariance`.
+ * The matrix is filled from column `from` on only. Null where the fits do not nest so, or the kind needs clusters: use `covariance`.
  */
-export function addedErrors(frame: Frame, start: Start, fit: Fit, kind: Variance): CoefficientErrors | null {
+export function addedErrors(frame: Frame, start: Start, fit: Fit, kind: Variance, from: number): CoefficientErrors | null {
   const k = start.fit.columns.length;
-  const nested = fit.columns.length > k && start.fit.columns.every((column, i) => fit.columns[i] === column);
+  const nested = from >= k && fit.columns.length > from && start.fit.columns.every((column, i) => fit.columns[i] === column);
   if (!nested || !start.cov.leverages || kind === "CR1" || kind === "CR2") return null;
   const shared = { kind, dfOf: () => fit.residualDf, clustered: null };
   if (kind === "classical") {
     const s2 = fit.residualSumOfSquares / fit.residualDf;
     return { ...shared, used: kind, matrix: fit.inverse.map((v) => v * s2) };
   }
-  const found = addedMeat(frame, start, fit, kind);
+  const found = addedMeat(frame, start, fit, kind, from);
   const used = found.leverageOne && (kind === "HC2" || kind === "HC3") ? "HC1" : kind;
-  const { meat } = used === kind ? found : addedMeat(frame, start, fit, used);
+  const { meat } = used === kind ? found : addedMeat(frame, start, fit, used, from);
   const factor = used === "HC1" ? frame.n / fit.residualDf : 1;
   return { ...shared, used, matrix: sandwich(fit.rInverse, meat, fit.columns.length).map((v) => v * factor) };
 }
@@ -37,59 +38,87 @@ function addedMeat(
   { fit: small, cov }: Start,
   fit: Fit,
   kind: Variance,
+  from: number,
 ): { meat: Float64Array; leverageOne: boolean } {
   const p = fit.columns.length;
   const k = small.columns.length;
   const along = orthonormalCoefficients(fit);
   const meat = new Float64Array(p * p);
   const u = new Float64Array((p - k) * ROW_BLOCK);
-  const square = new Float64Array(ROW_BLOCK);
+  const columns = fit.columns.map((c) => frame.columns[c]);
+  const factors = triangleColumns(fit.rInverse, p, k);
+  const h = new Float64Array(ROW_BLOCK);
+  const e = new Float64Array(ROW_BLOCK);
   let leverageOne = false;
   for (let start = 0; start < frame.n; start += ROW_BLOCK) {
     const height = Math.min(ROW_BLOCK, frame.n - start);
-    whitenAdded(frame, fit, k, start, height, u);
+    for (let j = k; j < p; j++) {
+      const at = (j - k) * ROW_BLOCK;
+      combineColumns(u, at, columns, factors[j - k], j + 1, start, height);
+      if (frame.weights) for (let i = 0; i < height; i++) u[at + i] *= Math.sqrt(frame.weights[start + i]);
+    }
     for (let i = 0; i < height; i++) {
-      const row = start + i;
-      const root = frame.weights ? Math.sqrt(frame.weights[row]) : 1;
-      let h = cov.leverages![row];
-      let e = cov.residuals[row] * root;
-      for (let j = k; j < p; j++) {
-        const value = u[(j - k) * ROW_BLOCK + i];
-        h += value * value;
-        e -= value * along[j];
+      h[i] = cov.leverages![start + i];
+      e[i] = cov.residuals[start + i] * (frame.weights ? Math.sqrt(frame.weights[start + i]) : 1);
+    }
+    for (let j = k; j < p; j++) {
+      const at = (j - k) * ROW_BLOCK;
+      const step = along[j];
+      for (let i = 0; i < height; i++) {
+        const value = u[at + i];
+        h[i] += value * value;
+        e[i] -= value * step;
       }
-      let left = 1 - h;
+    }
+    for (let i = 0; i < height; i++) {
+      let left = 1 - h[i];
       if (left < LEVERAGE_GAP) {
         leverageOne = true;
         left = 1;
       }
-      square[i] = (e * e) / (kind === "HC3" ? left * left : kind === "HC2" ? left : 1);
+      // from here on the residual's scaled square
+      e[i] = (e[i] * e[i]) / (kind === "HC3" ? left * left : kind === "HC2" ? left : 1);
     }
-    for (let a = k; a < p; a++) {
-      for (let b = k; b <= a; b++) {
-        const [x, y] = [(a - k) * ROW_BLOCK, (b - k) * ROW_BLOCK];
-        let sum = 0;
-        for (let i = 0; i < height; i++) sum += u[x + i] * u[y + i] * square[i];
-        meat[a * p + b] += sum;
-      }
-    }
+    addProducts(meat, p, k, from, u, e, height);
   }
   for (let a = 0; a < p; a++) for (let b = 0; b < a; b++) meat[b * p + a] = meat[a * p + b];
   return { meat, leverageOne };
 }
 
-/** The orthonormal columns k … p − 1 of a block of rows (√w-scaled), column-major. */
-function whitenAdded(frame: Frame, fit: Fit, k: number, start: number, height: number, u: Float64Array): void {
-  const p = fit.columns.length;
-  u.fill(0);
-  for (let j = k; j < p; j++) {
-    const at = (j - k) * ROW_BLOCK;
-    for (let i = 0; i <= j; i++) {
-      const factor = fit.rInverse[i * p + j];
-      const x = frame.columns[fit.columns[i]];
-      for (let r = 0; r < height; r++) u[at + r] += factor * x[start + r];
+/** meat += Σ u_a u_b·scaled over a block's rows, for a ≥ b ≥ from; u starts at column k. */
+function addProducts(
+  meat: Float64Array,
+  p: number,
+  k: number,
+  from: number,
+  u: Float64Array,
+  scaled: Float64Array,
+  height: number,
+): void {
+  const weighted = new Float64Array(height);
+  for (let a = from; a < p; a++) {
+    const x = (a - k) * ROW_BLOCK;
+    for (let i = 0; i < height; i++) weighted[i] = u[x + i] * scaled[i];
+    let b = from;
+    for (; b + 1 <= a; b += 2) {
+      const y = (b - k) * ROW_BLOCK;
+      const z = y + ROW_BLOCK;
+      let first = 0;
+      let second = 0;
+      for (let i = 0; i < height; i++) {
+        const w = weighted[i];
+        first += w * u[y + i];
+        second += w * u[z + i];
+      }
+      meat[a * p + b] += first;
+      meat[a * p + b + 1] += second;
     }
-    if (frame.weights) for (let r = 0; r < height; r++) u[at + r] *= Math.sqrt(frame.weights[start + r]);
+    if (b <= a) {
+      const y = (b - k) * ROW_BLOCK;
+      let sum = 0;
+      for (let i = 0; i < height; i++) sum += weighted[i] * u[y + i];
+      meat[a * p + b] += sum;
+    }
   }
 }
 

@@ -1,3 +1,4 @@
+import { combineColumns, triangleColumns } from "./combine";
 import type { Fit, Frame } from "./types";
 
 /** Rows worked on at a time, so that a block of whitened columns stays in the cache. */
@@ -24,17 +25,13 @@ export function whitenedBlocks(frame: Frame, fit: Fit, visit: (u: Float64Array, 
   const p = fit.columns.length;
   const u = new Float64Array(p * ROW_BLOCK);
   const { n, weights } = frame;
+  const columns = fit.columns.map((c) => frame.columns[c]);
+  const factors = triangleColumns(fit.rInverse, p, 0);
   for (let start = 0; start < n; start += ROW_BLOCK) {
     const height = Math.min(ROW_BLOCK, n - start);
-    u.fill(0);
     for (let j = 0; j < p; j++) {
       const at = j * ROW_BLOCK;
-      for (let k = 0; k <= j; k++) {
-        const factor = fit.rInverse[k * p + j];
-        if (factor === 0) continue;
-        const x = frame.columns[fit.columns[k]];
-        for (let i = 0; i < height; i++) u[at + i] += factor * x[start + i];
-      }
+      combineColumns(u, at, columns, factors[j], j + 1, start, height);
       if (weights) for (let i = 0; i < height; i++) u[at + i] *= Math.sqrt(weights[start + i]);
     }
     visit(u, start, height);

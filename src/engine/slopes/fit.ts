@@ -26,9 +26,9 @@ export function fitTrial(input: SlopesInput, modifier: string): InteractionFit {
   const fit = fitColumns(factor, [0, ...columnsOf(design, set), ...exposureColumns(design), ...extra, ...products]);
   const modifiers = [modifier];
   if (!hasErrors(input, fit)) return { fit, cov: null, modifiers };
-  const added = start && addedErrors(design.frame, start, fit, variance);
-  if (added) return { fit, cov: added, modifiers };
   const from = fit.columns.findIndex((c) => products.includes(c));
+  const added = start && addedErrors(design.frame, start, fit, variance, from);
+  if (added) return { fit, cov: added, modifiers };
   return { fit, cov: from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null, modifiers };
 }
 
