@@ -1,8 +1,5 @@
-import { Refusal } from "./cli/refusal";
+import { failure } from "./cli/failure";
 import { run } from "./cli/run";
-
-/** Exit code where the input cannot be used. */
-const UNUSABLE = 2;
 
 // a reader that has seen enough (head, less) closes the pipe: that is no failure
 process.stdout.on("error", (error: NodeJS.ErrnoException) => {
@@ -15,7 +12,7 @@ try {
   process.stderr.write(aside);
   process.stdout.write(out);
 } catch (error) {
-  if (!(error instanceof Refusal)) throw error;
-  process.stderr.write(error.message + "\n");
-  process.exitCode = UNUSABLE;
+  const { text, exitCode } = failure(error);
+  process.stderr.write(text + "\n");
+  process.exitCode = exitCode;
 }

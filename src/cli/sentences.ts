@@ -23,6 +23,8 @@ export const say = {
   overInput: (file: string) => `--to ${file} would overwrite the file that is being read; choose another name.`,
   toFolder: (file: string) => `--to ${file} is a folder; name a file in it.`,
   notWritten: (file: string, why: string) => `${file} could not be written: ${why}.`,
+  memory: "The comparison does not fit in memory; a file with fewer rows or columns, or a plan with fewer sets, may.",
+  fault: "Slantwise failed; the fault is its own, and nothing was written. Please report these lines:",
 } as const;
 
 function quoted(text: string): string {
