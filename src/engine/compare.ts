@@ -6,7 +6,7 @@ import type { Finding, Reason } from "./findings";
 import { finiteComparison } from "./finite";
 import { factorise } from "./linear/factorise";
 import type { Factor } from "./linear/types";
-import type { Plan } from "./plan";
+import type { Plan, Variance } from "./plan";
 import { findProblems } from "./question/problems";
 import { resolveQuestion } from "./question/resolve";
 import type { Resolved } from "./question/resolve";
@@ -16,6 +16,7 @@ import { ownEstimates } from "./readout/own";
 import { setResult } from "./readout/result";
 import type { Judged } from "./readout/result";
 import { fitSet } from "./readout/set";
+import type { Depth } from "./readout/set";
 import { findRows } from "./rows/common";
 import type { Rows } from "./rows/common";
 import { readSlopes } from "./slopes";
@@ -24,8 +25,15 @@ import type { Table } from "./table";
 export interface CompareOptions {
   /** Asked between sets and row blocks; true stops the work with `Cancelled`. */
   readonly cancelled?: () => boolean;
+  /**
+   * Called once with a first look (estimates with classical errors, slopes verdicts from them, no shifts; its question says "classical") where
+   * the plan's errors take longer. A set whose slopes differ there has no number there either.
+   */
+  readonly preview?: (first: Comparison) => void;
 }
 
+/** Rows times sets times tests from which a first look is given. */
+const FIRST_LOOK = 3e5;
 /** Up to this many rows times sets, every set is fitted on its own rows too; beyond it the base and the reported set. */
 const OWN_ROWS = 2e5;
 /** Parts and table errors of every set are computed up to this many rows times sets; beyond it for the sets shown. */
@@ -38,7 +46,7 @@ const IN_FULL = 2e6;
  * @returns a comparison without NaN or infinity; what the data do not allow is a `none` readout or a finding
  * @throws Cancelled; Error (a bug) when the plan has problems
  */
-export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions = {}): Comparison {
+export function compare(table: Table, plan: Plan, { cancelled, preview }: CompareOptions = {}): Comparison {
   const [problem] = findProblems(table, plan);
   if (problem) throw new Error(`compare was called with an unusable plan: ${problem.code}`);
   const resolved = resolveQuestion(table, plan);
@@ -55,17 +63,64 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
   const { modifiers } = resolved.question;
   const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers);
   const factor = factorise(design.frame, cancelled);
+  const work = { table, resolved, rows, design, factor, cancelled };
+  if (preview && isLong(resolved, rows))
+    preview(finish({ ...head, resolved: asClassical(resolved) }, design, firstLook(work), []));
+  const judged = judgeAll(work, resolved.question.variance, depthOf(resolved, rows));
+  return finish(head, design, resultsOf(work, judged, depthOf(resolved, rows)), findingsOf(table, rows, design, judged));
+}
+
+interface Work {
+  readonly table: Table;
+  readonly resolved: Resolved;
+  readonly rows: Rows;
+  readonly design: Design;
+  readonly factor: Factor;
+  readonly cancelled?: () => boolean;
+}
+
+/** Whether the plan's errors take long enough for a first look to be worth showing. */
+function isLong(resolved: Resolved, rows: Rows): boolean {
+  const { variance, modifiers } = resolved.question;
+  return variance !== "classical" && rows.common.length * resolved.sets.length * (1 + modifiers.length) > FIRST_LOOK;
+}
+
+function depthOf(resolved: Resolved, rows: Rows): (set: number) => Depth {
   const all = rows.common.length * resolved.sets.length <= IN_FULL;
-  const inFull = (i: number) => all || i === resolved.reported || i === 0;
-  const small = rows.common.length * resolved.sets.length <= OWN_ROWS;
-  const judged = resolved.sets.map((_, i): Judged => {
+  return (i) => (all || i === resolved.reported || i === 0 ? "full" : "exposure");
+}
+
+function asClassical(resolved: Resolved): Resolved {
+  return { ...resolved, question: { ...resolved.question, variance: "classical" } };
+}
+
+/** Every set with classical errors from the factor alone: estimates and slopes verdicts, no shifts. */
+function firstLook(work: Work): SetResult[] {
+  return resultsOf(
+    work,
+    judgeAll(work, "classical", () => "first look"),
+    () => "first look",
+  );
+}
+
+function judgeAll({ resolved, design, factor, cancelled }: Work, variance: Variance, depth: (set: number) => Depth): Judged[] {
+  return resolved.sets.map((_, i) => {
     stopIf(cancelled);
-    return judge(resolved, design, factor, i, inFull(i));
+    return judge(resolved, design, factor, i, variance, depth(i));
   });
-  const sets = judged.map((own, i): SetResult => {
+}
+
+function resultsOf(
+  { resolved, rows, design, factor, cancelled }: Work,
+  judged: readonly Judged[],
+  depth: (set: number) => Depth,
+): SetResult[] {
+  const small = rows.common.length * judged.length <= OWN_ROWS;
+  return judged.map((own, i) => {
     stopIf(cancelled);
     const ownRows = rows.own(i);
-    const full = inFull(i);
+    const wanted =
+      depth(i) !== "first look" && ownRows.length !== rows.common.length && (small || i === 0 || i === resolved.reported);
     return setResult({
       resolved,
       design,
@@ -74,19 +129,15 @@ export function compare(table: Table, plan: Plan, { cancelled }: CompareOptions 
       judged: own,
       isBase: i === 0,
       ownRows: ownRows.length,
-      ownEstimates:
-        full && ownRows.length !== rows.common.length && (small || i === 0 || i === resolved.reported)
-          ? ownEstimates(resolved, ownRows, resolved.sets[i])
-          : null,
-      inFull: full,
+      ownEstimates: wanted ? ownEstimates(resolved, ownRows, resolved.sets[i]) : null,
+      depth: depth(i),
     });
   });
-  return finish(head, design, sets, findingsOf(table, rows, design, judged));
 }
 
-function judge(resolved: Resolved, design: Design, factor: Factor, i: number, inFull: boolean): Judged {
-  const { variance, level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
-  const set = fitSet(design, factor, resolved.sets[i], variance, inFull);
+function judge(resolved: Resolved, design: Design, factor: Factor, i: number, variance: Variance, depth: Depth): Judged {
+  const { level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
+  const set = fitSet(design, factor, resolved.sets[i], variance, depth);
   const estimable = set.reasons.some((reason) => reason === null);
   const slopes = readSlopes({
     design,

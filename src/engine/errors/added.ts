@@ -20,12 +20,13 @@ export interface Start {
 export function addedErrors(frame: Frame, start: Start, fit: Fit, kind: Variance, from: number): CoefficientErrors | null {
   const k = start.fit.columns.length;
   const nested = from >= k && fit.columns.length > from && start.fit.columns.every((column, i) => fit.columns[i] === column);
-  if (!nested || !start.cov.leverages || kind === "CR1" || kind === "CR2") return null;
+  if (!nested || kind === "CR1" || kind === "CR2") return null;
   const shared = { kind, dfOf: () => fit.residualDf, clustered: null };
   if (kind === "classical") {
     const s2 = fit.residualSumOfSquares / fit.residualDf;
     return { ...shared, used: kind, matrix: fit.inverse.map((v) => v * s2) };
   }
+  if (!start.cov.leverages) return null;
   const found = addedMeat(frame, start, fit, kind, from);
   const used = found.leverageOne && (kind === "HC2" || kind === "HC3") ? "HC1" : kind;
   const { meat } = used === kind ? found : addedMeat(frame, start, fit, used, from);

@@ -9,7 +9,7 @@ import { fitSet } from "./set";
  */
 export function ownEstimates(resolved: Resolved, rows: Int32Array, set: readonly string[]): (number | null)[] {
   const design = buildDesign(resolved, rows, set, []);
-  const { fit, reasons } = fitSet(design, factorise(design.frame), set, "classical", false);
+  const { fit, reasons } = fitSet(design, factorise(design.frame), set, "classical", "first look");
   return design.contrasts.map(({ column, factor }, i) =>
     reasons[i] ? null : fit.coefficients[fit.columns.indexOf(column)] * factor,
   );

@@ -8,7 +8,7 @@ import { shiftOf } from "../shift/shift";
 import { changeWord, marginBounds } from "../shift/word";
 import type { SlopesOutcome } from "../slopes";
 import { estimateOf, jointOf } from "./estimate";
-import type { SetFit } from "./set";
+import type { Depth, SetFit } from "./set";
 
 /** One set with its verdict, before it is put together. */
 export interface Judged {
@@ -26,8 +26,8 @@ export interface ResultInput {
   readonly ownRows: number;
   /** Own-rows estimate of each contrast; null where it was not computed or has none. */
   readonly ownEstimates: readonly (number | null)[] | null;
-  /** Parts of the shift and errors of the whole table are computed for the sets a person looks at. */
-  readonly inFull: boolean;
+  /** Parts of the shift and errors of the whole table are computed for the sets a person looks at; a first look has no shift. */
+  readonly depth: Depth;
 }
 
 /** Puts one set together: which kind of readout it has follows from its slopes, and `varies` and `none` carry no estimate (METHODS 5). */
@@ -70,7 +70,7 @@ function readoutOf(input: ResultInput, i: number): Readout {
   const own = estimateOf(set, contrast, level);
   const kind = slopes.kind;
   const baseVaries = base.slopes.kind === "varies" && base.set.columns.length > 0;
-  if (isBase || baseVaries || base.set.reasons[i] || !set.cov || !base.set.cov)
+  if (input.depth === "first look" || isBase || baseVaries || base.set.reasons[i] || !set.cov || !base.set.cov)
     return { kind, ...own, shift: null, change: null };
   const shift = shiftOf({
     design,
@@ -81,23 +81,23 @@ function readoutOf(input: ResultInput, i: number): Readout {
     names: set.columns.filter((name) => !base.set.columns.includes(name)),
     level,
     df: own.df,
-    withParts: input.inFull,
+    withParts: input.depth === "full",
   });
   const change = changeWord(estimateOf(base.set, contrast, level), own, shift.interval, marginBounds(margin, outcomeForm));
   return { kind, ...own, shift, change };
 }
 
 /** The fitted table; where the set varies, that of the fit with the interactions, so that no common slope stands in it. */
-function modelOf({ resolved, design, judged, inFull }: ResultInput): SetResult["model"] {
+function modelOf({ resolved, design, judged, depth }: ResultInput): SetResult["model"] {
   const { set, slopes } = judged;
   if (slopes.varies) {
     const { fit, cov, modifiers } = slopes.varies.joint;
     return modelRows(
       design,
       fit,
-      inFull && cov ? covariance(design.frame, fit, resolved.question.variance).matrix : null,
+      depth === "full" && cov ? covariance(design.frame, fit, resolved.question.variance).matrix : null,
       modifiers,
     );
   }
-  return modelRows(design, set.fit, inFull ? (set.cov?.matrix ?? null) : null, []);
+  return modelRows(design, set.fit, depth === "full" ? (set.cov?.matrix ?? null) : null, []);
 }

@@ -1,11 +1,18 @@
 import type { ContrastColumn, Design } from "../design/types";
 import { covariance } from "../errors/covariance";
+import { lightErrors } from "../errors/light";
 import type { Covariance } from "../errors/types";
 import type { Reason } from "../findings";
 import { fitColumns } from "../linear/fit";
 import { refine } from "../linear/refine";
-import type { Factor, Fit } from "../linear/types";
+import type { Factor, Fit, Frame } from "../linear/types";
 import type { Variance } from "../plan";
+
+/**
+ * How much of a set is computed: everything; errors of the exposure's coefficients alone; or a first look, classical errors without a pass
+ * over the rows.
+ */
+export type Depth = "full" | "exposure" | "first look";
 
 /** One set, fitted. */
 export interface SetFit {
@@ -21,9 +28,8 @@ export interface SetFit {
 
 /**
  * Fits a set: constant, its covariates, the exposure last, so that it is the exposure that falls to a dependence with them.
- * @param inFull false: errors of the exposure's coefficients alone, at less cost
  */
-export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance, inFull: boolean): SetFit {
+export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance, depth: Depth): SetFit {
   const { frame, contrasts } = design;
   const exposure = contrasts.map((c) => c.column).filter((c) => c >= 0);
   const before = columns.flatMap((name) => design.covariates.get(name)!.columns);
@@ -34,19 +40,24 @@ export function fitSet(design: Design, factor: Factor, columns: readonly string[
   const short = first.residualDf <= 0 && first.setAside.some(({ column }) => exposure.includes(column));
   const clusters = variance === "CR1" || variance === "CR2" ? (frame.clusters?.count ?? 0) : null;
   const enough = first.residualDf > 0 && (clusters === null || clusters > 1);
-  const fit = enough ? refine(frame, first) : first;
+  const fit = enough && depth !== "first look" ? refine(frame, first) : first;
   const aside = first.setAside.filter(({ column }) => !exposure.includes(column));
   const tooFew: Reason | null =
     short || frame.n <= exposure.length ? { code: "too-few-rows", rows: frame.n, coefficients: wanted.length } : null;
   return {
     columns,
     fit,
-    cov: enough ? covariance(frame, fit, variance, inFull ? 0 : firstExposure(fit.columns, exposure)) : null,
+    cov: enough ? errorsOf(frame, fit, variance, depth, exposure) : null,
     setAside: mergeAside(
       aside.map(({ column, combinationOf }) => ({ column: owner(column), combinationOf: unique(combinationOf.map(owner)) })),
     ),
     reasons: contrasts.map((contrast) => tooFew ?? reasonFor(design, contrast, fit, owner)),
   };
+}
+
+function errorsOf(frame: Frame, fit: Fit, variance: Variance, depth: Depth, exposure: readonly number[]): Covariance {
+  if (depth === "first look") return lightErrors(fit);
+  return covariance(frame, fit, variance, depth === "exposure" ? firstExposure(fit.columns, exposure) : 0);
 }
 
 function firstExposure(columns: readonly number[], exposure: readonly number[]): number {
