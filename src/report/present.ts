@@ -8,7 +8,7 @@ import type { ContrastBlock, Presentation, Sentence, ShiftRow } from "./presenta
 import { lineOf, shiftRows } from "./rows";
 import { scaleOf } from "./scale";
 import { stripOf } from "./strip";
-import { sayErrors, sayJoint, sayRows } from "./wording/facts";
+import { sayErrors, sayJoint, sayOwnRows, sayRows } from "./wording/facts";
 import { sayFinding } from "./wording/finding";
 import { sayReadout } from "./wording/readout";
 
@@ -80,15 +80,21 @@ function factsOf(comparison: Comparison, plan: Plan): string[] {
   return facts;
 }
 
-/** Notes in the order found, one of a kind where several sets say the same. */
+/** Notes in the order found, one of a kind where several sets say the same; last, what the rows alone did to the sets a person looks at. */
 function notesOf(comparison: Comparison, plan: Plan): Presentation["notes"] {
   const seen = new Set<string>();
-  return comparison.findings.flatMap((finding) => {
+  const found = comparison.findings.flatMap((finding) => {
     const text = sayFinding(finding, comparison, plan);
     if (seen.has(text)) return [];
     seen.add(text);
-    return [{ code: finding.code, text, lines: "lines" in finding ? finding.lines : [], important: IMPORTANT.has(finding.code) }];
+    const lines = "lines" in finding ? finding.lines : [];
+    return [{ code: finding.code as string, text, lines, important: IMPORTANT.has(finding.code) }];
   });
+  const looked = [...new Set([0, comparison.reported])];
+  const rows = looked
+    .flatMap((set) => sayOwnRows(comparison, plan, set))
+    .map((text) => ({ code: "own-rows", text, lines: [], important: false }));
+  return [...found, ...rows];
 }
 
 function blockOf(

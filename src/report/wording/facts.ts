@@ -1,7 +1,9 @@
 import type { Comparison } from "../../engine/comparison";
 import type { Plan } from "../../engine/plan";
-import { count, pValue, significant } from "../digits";
-import { columnName, listed, rowsName } from "../names";
+import { count, fixed, pValue, significant } from "../digits";
+import { columnName, listed, rowsName, word } from "../names";
+import { withUnit } from "../scale";
+import { decimalsOf, voiceOf } from "./difference";
 
 /** "errors CR2 by block", "errors HC3, weighted by size". */
 export function sayErrors({ question }: Comparison, plan: Plan): string {
@@ -33,4 +35,29 @@ export function sayRows({ rows, question }: Comparison, plan: Plan): string {
     return `${count(lostRows)} ${why} ${columnName(column, plan)}`;
   });
   return `${count(rows.common)} of ${count(rows.read)} ${name} were used; left out: ${listed(lost)}.`;
+}
+
+/**
+ * What the rows alone did to an estimate: the set's own complete rows against the common ones, apart from any shift (METHODS 1). One sentence for
+ * each contrast where the two differ and the set has a number on both.
+ */
+export function sayOwnRows(comparison: Comparison, plan: Plan, index: number): string[] {
+  const set = comparison.sets[index];
+  const { rows } = comparison;
+  return set.contrasts.flatMap((contrast) => {
+    const { readout, fromRows } = contrast;
+    if (fromRows === null || readout.kind === "varies" || readout.kind === "none") return [];
+    const voice = voiceOf(comparison, plan, contrast);
+    const decimals = decimalsOf(voice, readout);
+    const moved = voice.scale.show(readout.estimate) - voice.scale.show(readout.estimate - fromRows);
+    const several = set.contrasts.length > 1 ? ` of ${word(contrast.level ?? contrast.contrast)}` : "";
+    const size = withUnit(fixed(moved, decimals, true), voice.scale);
+    const lead =
+      set.adjustedFor.length === 0
+        ? "With nothing held fixed"
+        : `With ${listed(set.adjustedFor.map((c) => columnName(c, plan)))} held fixed`;
+    return [
+      `${lead}, ${count(set.ownRows)} ${rowsName(plan)} are complete; keeping to the ${count(rows.common)} that all sets share changes the ${comparison.question.kind === "groups" ? "difference" : "slope"}${several} by ${size}.`,
+    ];
+  });
 }
