@@ -5,14 +5,19 @@ import { mkdirSync, writeFileSync } from "node:fs";
 import { random } from "./random.mjs";
 
 const here = import.meta.dirname;
-const csv = (name, header, rows) => writeFileSync(`${here}/${name}`, [header, ...rows].map((row) => row.join(",")).join("\n") + "\n");
+const csv = (name, header, rows) =>
+  writeFileSync(`${here}/${name}`, [header, ...rows].map((row) => row.join(",")).join("\n") + "\n");
 const id = (i) => `F${String(i + 1).padStart(4, "0")}`;
 const sigmoid = (x) => 1 / (1 + Math.exp(-x));
 
 /** Full retrofit saves about 210 kWh a winter, but the larger flats were done first and use more heat: the sign reverses. */
 function heating() {
   const { uniform, normal, pick } = random(20261);
-  const blocks = Array.from({ length: 42 }, (_, b) => ({ name: `B${String(b + 1).padStart(2, "0")}`, size: 62 + 9 * normal(), heat: 120 * normal() }));
+  const blocks = Array.from({ length: 42 }, (_, b) => ({
+    name: `B${String(b + 1).padStart(2, "0")}`,
+    size: 62 + 9 * normal(),
+    heat: 120 * normal(),
+  }));
   const flats = [];
   const meters = [];
   const works = [];
@@ -61,7 +66,8 @@ function valves() {
     const hours = Math.min(24, Math.max(6, 9 + 1.8 * persons + 3 * normal()));
     const valve = uniform() < sigmoid((hours - 14.5) / 2.6) ? "fitted" : "none";
     const facing = pick(["east", "north", "south", "west"]);
-    const kwh = 1500 + 71 * hours + 40 * persons + (facing === "north" ? 140 : 0) - (valve === "fitted" ? 262 : 0) + 340 * normal();
+    const kwh =
+      1500 + 71 * hours + 40 * persons + (facing === "north" ? 140 : 0) - (valve === "fitted" ? 262 : 0) + 340 * normal();
     rows.push([id(i), valve, hours.toFixed(1), persons, facing, Math.round(kwh)]);
   }
   csv("valves.csv", ["flat_id", "valves", "hours_home", "persons", "facing", "kwh"], rows);

@@ -6,19 +6,19 @@ import type { Fit, Frame } from "./types";
 
 /** Rounds of refinement; each gains up to 15 digits less the logarithm of the condition number. */
 const ROUNDS = 3;
-/** A well-conditioned fit on many rows is as good as refined already: coefficients are off by about condition · 1e-16. */
-const WELL_CONDITIONED = 300;
+/** A well-conditioned fit is as good as refined already: coefficients are off by about condition · 1e-16. With many rows refining is dear. */
+const WELL_CONDITIONED = { few: 30, many: 300 };
 const MANY_ROWS = 20_000;
 
 /**
  * The same fit with its coefficients refined by Björck's (1967) iteration on the augmented system, residuals accumulated in doubled
  * precision: the digits that plain doubles lose to a near dependence come back, also where the residuals are large.
- * A fit that needs none of it (well conditioned, many rows) is returned as it is.
+ * A fit that needs none of it (well conditioned) is returned as it is.
  */
 export function refine(frame: Frame, fit: Fit): Fit {
   const p = fit.columns.length;
   if (p === 0 || fit.residualDf < 0) return fit;
-  if (frame.n > MANY_ROWS && condition(fit, frame) < WELL_CONDITIONED) return fit;
+  if (condition(fit, frame) < WELL_CONDITIONED[frame.n > MANY_ROWS ? "many" : "few"]) return fit;
   const columns = fit.columns.map((c) => frame.columns[c]);
   const b = Float64Array.from(fit.coefficients);
   let r = residuals(frame, fit);
