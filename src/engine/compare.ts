@@ -152,6 +152,7 @@ function judge(resolved: Resolved, design: Design, factor: Factor, i: number, va
     margin,
     reportAt: resolved.reportAt,
     outcomeForm,
+    average: resolved.average,
   });
   return { set, slopes };
 }

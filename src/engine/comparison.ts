@@ -129,6 +129,18 @@ export interface VariesReadout {
   readonly profiles: readonly Profile[];
   readonly crossing: Crossing | null;
   readonly regions: readonly Region[];
+  /** Only when the plan asks for it. */
+  readonly average?: AverageOverRows;
+}
+
+/** The mean of the differences over stated rows: not "the effect", which does not exist where slopes differ. */
+export interface AverageOverRows {
+  /** "all rows" or an exposure group. */
+  readonly over: string;
+  readonly rows: number;
+  readonly estimate: number;
+  readonly standardError: number | null;
+  readonly interval: readonly [number, number] | null;
 }
 
 export interface NoReadout {

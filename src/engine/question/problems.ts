@@ -3,6 +3,7 @@ import type { Plan } from "../plan";
 import type { Column, Table } from "../table";
 import { asGroups, distinctValues, findColumn, isAmount } from "./columns";
 import { adjustmentColumns, namings } from "./roles";
+import { ALL_ROWS } from "../slopes/average";
 import { EVERY_LIMIT, listSets, SETS_LIMIT } from "./sets";
 
 /** Groups of an exposure; beyond it nobody reads one contrast a group. */
@@ -50,14 +51,17 @@ function outcomeProblems(table: Table, { outcome }: Plan): Problem[] {
   return [{ code: "not-numeric", column: column.name, role: "outcome", example: levels[0] ?? "" }];
 }
 
-function exposureProblems(table: Table, { exposure }: Plan): Problem[] {
+function exposureProblems(table: Table, { exposure, average }: Plan): Problem[] {
   const column = findColumn(table, exposure.column)!;
   if (exposure.kind === "amount" && !isAmount(column))
     return [{ code: "not-numeric", column: column.name, role: "exposure", example: asGroups(column).levels[0] ?? "" }];
   const count = levelCount(column, GROUP_LIMIT);
   const grouped =
     !isAmount(column) || exposure.kind === "groups" || (column.kind === "number" && exposure.kind === undefined && count === 2);
-  if (!grouped) return [];
+  if (!grouped)
+    return average && average !== ALL_ROWS
+      ? [{ code: "unknown-level", column: column.name, level: average, levels: [ALL_ROWS] }]
+      : [];
   if (count > GROUP_LIMIT)
     return [
       {
@@ -72,6 +76,9 @@ function exposureProblems(table: Table, { exposure }: Plan): Problem[] {
   const { reference } = exposure;
   if (reference !== undefined && !levels.includes(String(reference)))
     return [{ code: "unknown-level", column: column.name, level: String(reference), levels: [...levels] }];
+  if (average && average !== ALL_ROWS && !levels.includes(average)) {
+    return [{ code: "unknown-level", column: column.name, level: average, levels: [ALL_ROWS, ...levels] }];
+  }
   return [];
 }
 

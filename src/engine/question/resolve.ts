@@ -30,6 +30,7 @@ export interface Resolved {
   readonly weights: Float64Array | null;
   readonly cluster: Groups | null;
   readonly reportAt: Plan["reportAt"];
+  readonly average: string | null;
   readonly findings: readonly Finding[];
 }
 
@@ -91,6 +92,7 @@ export function resolveQuestion(table: Table, plan: Plan): Resolved {
     weights,
     cluster,
     reportAt: plan.reportAt,
+    average: plan.average ?? null,
     findings,
   };
 }

@@ -1,4 +1,5 @@
 import type { VariesReadout } from "../comparison";
+import { averageOver } from "./average";
 import { crossingOf, straightOf } from "./crossing";
 import { fitInteraction } from "./fit";
 import { profilesOf } from "./profiles";
@@ -23,18 +24,20 @@ export function readSlopes(input: SlopesInput): SlopesOutcome {
   return { tests, kind: "varies", differing, varies: { perContrast: readContrasts(input, joint), joint }, findings };
 }
 
-function readContrasts({ design, level, reportAt }: SlopesInput, joint: InteractionFit): (VariesReadout | null)[] {
+function readContrasts({ design, level, reportAt, average }: SlopesInput, joint: InteractionFit): (VariesReadout | null)[] {
   const [modifier] = joint.modifiers;
   const values = design.modifierValues.get(modifier)!;
   return design.contrasts.map((contrast) => {
     if (contrast.column < 0) return null;
     const line = straightOf(design, joint, contrast);
+    const asked = average === null ? null : averageOver(design, joint, contrast, average, level);
     return {
       kind: "varies",
       modifiers: joint.modifiers,
       profiles: profilesOf(design, joint, contrast, level, reportAt),
       crossing: line && values.kind === "amount" ? crossingOf(line, modifier, values.values, level) : null,
       regions: regionsOf(design, joint, contrast, level),
+      ...(asked ? { average: asked } : {}),
     };
   });
 }

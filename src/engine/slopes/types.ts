@@ -22,6 +22,8 @@ export interface SlopesInput {
   readonly margin: number | null;
   readonly reportAt: Plan["reportAt"];
   readonly outcomeForm: "as is" | "log";
+  /** Rows to average over where slopes differ: "all rows", a group, or null. */
+  readonly average: string | null;
 }
 
 /** Whether a set has one effect, and what there is instead where it has not. */

@@ -1,8 +1,8 @@
-import type { Profile, Region, SetResult, SlopesTest, VariesReadout } from "../../engine/comparison";
-import { decimalsFor, exactly, fixed, levelName, percent, pValue, significant } from "../digits";
+import type { AverageOverRows, Profile, Region, SetResult, SlopesTest, VariesReadout } from "../../engine/comparison";
+import { count, decimalsFor, exactly, fixed, levelName, percent, pValue, significant } from "../digits";
 import { columnName, listed, rowsName, word } from "../names";
 import { withUnit } from "../scale";
-import { range } from "./difference";
+import { decimalsOf, direction, intervalPhrase, range } from "./difference";
 import type { Voice } from "./difference";
 
 /** What stays open about slopes where one estimate is printed: which modifiers, and how much the data leave open. */
@@ -51,6 +51,7 @@ export function sayInstead(voice: Voice, readout: VariesReadout, held: string): 
   if (readout.crossing) sentences.push(sayCrossing(voice, readout));
   const surely = sayRegions(voice, readout);
   if (surely) sentences.push(surely);
+  if (readout.average) sentences.push(sayAverage(voice, readout.average));
   return sentences;
 }
 
@@ -61,7 +62,20 @@ export function sayWaysOn({ comparison }: Voice): string {
     comparison.question.margin === null
       ? "state what difference would matter, if small ones do not"
       : "state a larger difference that would matter, if this one does not";
-  return `Report the ${what} at stated values. Two ways on: ${margin}; or ask for the average over stated rows.`;
+  return `Report the ${what} at stated values. Two ways on: ${margin}; or ask for the average over stated rows (the plan's “average”).`;
+}
+
+/** The average that was asked for, under that name. */
+function sayAverage(voice: Voice, average: AverageOverRows): string {
+  const { plan, comparison, exposure } = voice;
+  const decimals = decimalsOf(voice, average);
+  const name = rowsName(plan);
+  const whose =
+    average.over === "all rows"
+      ? `all ${count(average.rows)} ${name}`
+      : `the ${count(average.rows)} ${name} with ${exposure} = ${word(average.over)}`;
+  const what = comparison.question.kind === "groups" ? "difference" : "slope";
+  return `Averaged over ${whose}, the ${what} is ${direction(voice, average.estimate, decimals)} ${intervalPhrase(voice, average, decimals)}; it is an average of differing ${what}s and belongs to these rows.`;
 }
 
 function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): string {
