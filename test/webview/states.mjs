@@ -97,9 +97,15 @@ export function panel(more = {}, shown = {}, asked = {}) {
       blocks: [block()],
       joint: null,
       notes: [
-        { code: "unreadable-cells", text: "3 cells of floor_m2 are not numbers and count as missing.", lines: [17, 212, 901] },
-        { code: "thousands-marks", text: "The numbers of kwh are written with thousands marks.", lines: [] },
+        {
+          code: "unreadable-cells",
+          text: "3 cells of floor_m2 are not numbers and count as missing.",
+          lines: [17, 212, 901],
+          important: true,
+        },
+        { code: "thousands-marks", text: "The numbers of kwh are written with thousands marks.", lines: [], important: false },
       ],
+      rows: "1,187 of 1,204 rows were used; left out: 17 without kwh.",
       provenance: ["HC3 standard errors"],
       summary: "Holding floor_m2 and tenure fixed, 212 kWh lower.",
       ...shown,
