@@ -22,8 +22,10 @@ export function escapeParagraph(text: string): string {
     .replace(/^(\s*\d+)([.)])(?=\s|$)/, (_, digits: string, c: string) => digits + reference(c));
 }
 
+const NAMED: Record<string, string> = { "<": "&lt;", ">": "&gt;", "&": "&amp;" };
+
 function reference(c: string): string {
-  return `&#${c.codePointAt(0)};`;
+  return NAMED[c] ?? `&#${c.codePointAt(0)};`;
 }
 
 /** Text for a terminal or a tab-separated cell: no line breaks, tabs or control characters. */

@@ -43,11 +43,11 @@ export function decimalsOf({ scale }: Voice, { estimate, standardError }: Pick<E
   return decimalsFor([scale.showError(standardError, estimate)], scale.show(estimate));
 }
 
-/** "212 kWh per winter lower", "no different" at exactly 0 as printed. */
+/** "212 kWh per winter lower", "no different (0.0)" where that is what the digits show. */
 export function direction({ scale }: Voice, value: number, decimals: number): string {
   const shown = scale.show(value);
   const text = fixed(Math.abs(shown), decimals);
-  if (Number(text.replaceAll(",", "")) === 0) return `${withUnit(text, scale)} different`;
+  if (Number(text.replaceAll(",", "")) === 0) return `no different (${withUnit(text, scale)})`;
   return `${withUnit(text, scale)} ${shown < 0 ? "lower" : "higher"}`;
 }
 

@@ -74,7 +74,7 @@ function sayEstimate(voice: Voice, estimate: number, decimals: number): string {
   const { comparison, outcome } = voice;
   const size = direction(voice, estimate, decimals);
   return comparison.question.design === "randomised"
-    ? `the estimated effect is ${outcome} ${size} ${comparedGroups(voice)}`
+    ? `the estimated effect on ${outcome} is ${size} ${comparedGroups(voice)}`
     : `${outcome} is ${size} ${comparedGroups(voice)}`;
 }
 
