@@ -1,25 +1,28 @@
 import type { Finding } from "../engine/findings";
-import { naturalCompare } from "../engine/question/natural";
 import type { Column } from "../engine/table";
-import { isoDay, numberIn } from "./cell";
-import type { NumberStyle } from "./cell";
+import { isoDay } from "./date";
+import { numberIn } from "./number";
+import type { NumberRead, NumberStyle } from "./number";
+import { wordColumn } from "./words";
 
-/** Share of filled cells that must be numbers (or dates) for a column to be numeric. */
-const NUMERIC_SHARE = 0.95;
-/** A word column with more than this share of distinct cells is text, if it has more than a handful. */
-const TEXT_SHARE = 0.8;
-const TEXT_LEVELS = 30;
+/** One filled cell in this many may be unreadable in a numeric or date column: at least 95 % must be of the kind (DESIGN, Data). */
+const ONE_IN = 20;
 /** Cells quoted in a finding. */
 const EXAMPLES = 3;
-const YES_NO = [
-  ["no", "yes"],
-  ["false", "true"],
-  ["n", "y"],
-  ["f", "t"],
-];
+
+export interface Typed {
+  readonly column: Column;
+  readonly findings: Finding[];
+}
+
+/** Whether few enough of the filled cells fail for the column to be of a kind. */
+export function isMostly(failed: number, filled: number): boolean {
+  return filled > 0 && failed * ONE_IN <= filled;
+}
 
 /**
  * One column's trimmed cells as a typed column. Cells of a numeric column that are no numbers count as missing and are listed by line.
+ * A column without a filled cell is numeric.
  * @param cells one a row, trimmed; @param lines the rows' lines
  */
 export function typeColumn(
@@ -28,116 +31,116 @@ export function typeColumn(
   lines: Uint32Array,
   isMissing: (cell: string) => boolean,
   style: NumberStyle,
-): { readonly column: Column; readonly findings: Finding[] } {
-  const missing = cells.map(isMissing);
-  const filled = missing.reduce((sum, gone) => sum + (gone ? 0 : 1), 0);
-  const share = (test: (cell: string) => boolean) => {
-    let failed = 0;
-    for (let i = 0; i < cells.length; i++) {
-      // A column of words shows it early.
-      if (!missing[i] && !test(cells[i]) && !isMostly(++failed, filled)) return false;
+): Typed {
+  const missing = new Uint8Array(cells.length);
+  let filled = cells.length;
+  cells.forEach((cell, i) => {
+    if (isMissing(cell)) {
+      missing[i] = 1;
+      filled--;
     }
-    return true;
-  };
-  if (filled === 0) return { column: { kind: "number", name, values: new Float64Array(cells.length).fill(NaN) }, findings: [] };
-  if (share((cell) => numberIn(cell, style) !== null)) return numberColumn(name, cells, lines, missing, style);
-  if (share((cell) => isoDay(cell) !== null)) return dateColumn(name, cells, lines, missing);
-  return { column: wordColumn(name, cells, missing, filled), findings: [] };
+  });
+  return (
+    numberColumn(name, cells, lines, missing, filled, style) ??
+    dateColumn(name, cells, lines, missing, filled) ?? { column: wordColumn(name, cells, missing, filled), findings: [] }
+  );
 }
 
 function numberColumn(
   name: string,
   cells: readonly string[],
   lines: Uint32Array,
-  missing: readonly boolean[],
+  missing: Uint8Array,
+  filled: number,
   style: NumberStyle,
-) {
+): Typed | null {
   const values = new Float64Array(cells.length).fill(NaN);
   const bad: number[] = [];
   const beyond: number[] = [];
+  const marks = new Alike();
   const marked: number[] = [];
-  let plainLarge = 0;
-  cells.forEach((cell, i) => {
-    if (missing[i]) return;
-    const found = numberIn(cell, style);
-    if (!found) bad.push(i);
-    else if (!Number.isFinite(found.value)) beyond.push(i);
+  for (let i = 0; i < cells.length; i++) {
+    if (missing[i]) continue;
+    const found = numberIn(cells[i], style);
+    if (found) marks.add(found);
+    if (!found) {
+      bad.push(i);
+      if (!isMostly(bad.length, filled)) return null; // a column of words shows it early
+    } else if (!Number.isFinite(found.value)) beyond.push(i);
     else {
       values[i] = found.value;
       if (found.thousands) marked.push(i);
-      else if (Math.abs(found.value) >= 1000) plainLarge++;
     }
-  });
-  const findings: Finding[] = [];
-  if (marked.length > 0 && plainLarge > 0) {
-    // Not alike in them: 1,234 beside 1234 may be two different habits, so neither reading is safe for the marked cells.
+  }
+  if (marks.marked && !marks.agree) {
+    // 1,234 beside 1234 may be two habits, so neither reading is safe for the marked cells.
     for (const i of marked) values[i] = NaN;
     bad.push(...marked);
     bad.sort((a, b) => a - b);
-  } else if (marked.length > 0) findings.push({ code: "thousands-marks", column: name });
-  if (bad.length > 0) findings.push(unreadable(name, bad, cells, lines));
-  if (beyond.length > 0) findings.push({ code: "beyond-double-range", column: name, lines: beyond.map((i) => lines[i]) });
-  return { column: { kind: "number", name, values } as const, findings };
+    if (!isMostly(bad.length, filled)) return null;
+  }
+  const findings: Finding[] = [];
+  if (marks.marked && marks.agree) findings.push({ code: "thousands-marks", column: name });
+  if (bad.length > 0) findings.push(unreadable(name, bad, (i) => cells[i], lines));
+  if (beyond.length > 0) findings.push(beyondRange(name, beyond, lines));
+  return { column: { kind: "number", name, values }, findings };
 }
 
-function dateColumn(name: string, cells: readonly string[], lines: Uint32Array, missing: readonly boolean[]) {
+/** Whether a column is alike in its thousands marks: every number of four digits or more before the decimals has them, or none. */
+class Alike {
+  marked = false;
+  private large = false;
+
+  get agree(): boolean {
+    return !(this.marked && this.large);
+  }
+
+  add({ value, thousands }: NumberRead): void {
+    if (thousands) this.marked = true;
+    else if (Math.abs(value) >= 1000) this.large = true;
+  }
+}
+
+function dateColumn(
+  name: string,
+  cells: readonly string[],
+  lines: Uint32Array,
+  missing: Uint8Array,
+  filled: number,
+): Typed | null {
   const values = new Float64Array(cells.length).fill(NaN);
   const bad: number[] = [];
-  cells.forEach((cell, i) => {
-    if (missing[i]) return;
-    const day = isoDay(cell);
-    if (day === null) bad.push(i);
-    else values[i] = day;
-  });
+  for (let i = 0; i < cells.length; i++) {
+    if (missing[i]) continue;
+    const day = isoDay(cells[i]);
+    if (day !== null) values[i] = day;
+    else {
+      bad.push(i);
+      if (!isMostly(bad.length, filled)) return null;
+    }
+  }
   return {
-    column: { kind: "date", name, values } as const,
-    findings: bad.length > 0 ? [unreadable(name, bad, cells, lines)] : [],
+    column: { kind: "date", name, values },
+    findings: bad.length > 0 ? [unreadable(name, bad, (i) => cells[i], lines, true)] : [],
   };
 }
 
-/** The finding for cells of a numeric or date column that are neither. @param bad rows; @param cells text of a row */
+/** The finding for cells of a numeric or date column that are neither. @param bad rows in order; @param cell text of a row */
 export function unreadable(
   column: string,
   bad: readonly number[],
-  cells: { readonly [row: number]: string },
+  cell: (row: number) => string,
   lines: Uint32Array,
+  dates = false,
 ): Finding {
-  const examples = [...new Set(bad.map((i) => cells[i]))].slice(0, EXAMPLES);
-  return { code: "unreadable-cells", column, lines: bad.map((i) => lines[i]), examples };
+  const examples: string[] = [];
+  for (let k = 0; k < bad.length && examples.length < EXAMPLES; k++) {
+    if (!examples.includes(cell(bad[k]))) examples.push(cell(bad[k]));
+  }
+  return { code: "unreadable-cells", column, lines: bad.map((i) => lines[i]), examples, ...(dates && { dates: true }) };
 }
 
-function wordColumn(name: string, cells: readonly string[], missing: readonly boolean[], filled: number): Column {
-  const first = new Map<string, number>();
-  const codes = new Int32Array(cells.length).fill(-1);
-  cells.forEach((cell, i) => {
-    if (missing[i]) return;
-    let code = first.get(cell);
-    if (code === undefined) first.set(cell, (code = first.size));
-    codes[i] = code;
-  });
-  return arrangeWords(name, [...first.keys()], codes, filled);
-}
-
-/**
- * A word column from its distinct cells in order of appearance: levels in natural order (text keeps the order of appearance), the kind by
- * how many there are.
- * @param codes changed in place to the arranged levels
- */
-export function arrangeWords(name: string, found: readonly string[], codes: Int32Array, filled: number): Column {
-  const isText = found.length > TEXT_LEVELS && found.length > TEXT_SHARE * filled;
-  if (isText) return { kind: "text", name, levels: found, codes };
-  const order = found.map((_, i) => i).sort((a, b) => naturalCompare(found[a], found[b]));
-  const levels = order.map((i) => found[i]);
-  const place = new Int32Array(found.length);
-  order.forEach((i, at) => (place[i] = at));
-  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) codes[i] = place[codes[i]];
-  const lower = levels.map((level) => level.toLowerCase());
-  const yesNo =
-    levels.length === 2 && YES_NO.some((pair) => pair.includes(lower[0]) && pair.includes(lower[1]) && lower[0] !== lower[1]);
-  return { kind: yesNo ? "yes/no" : "category", name, levels, codes };
-}
-
-/** Whether few enough of the filled cells fail for the column to be of a kind. */
-export function isMostly(failed: number, filled: number): boolean {
-  return filled > 0 && failed <= filled - Math.ceil(NUMERIC_SHARE * filled);
+/** The finding for numbers that no double can hold. @param rows in order */
+export function beyondRange(column: string, rows: readonly number[], lines: Uint32Array): Finding {
+  return { code: "beyond-double-range", column, lines: rows.map((i) => lines[i]) };
 }

@@ -1,12 +1,15 @@
 import type { Finding } from "../engine/findings";
 
-/** Column names as they are used: trimmed, an empty one `column 7`, a repeated one `dose (5)`, each change a finding. */
+/**
+ * Column names as they are used: an empty one is `column 7`, a repeated one `dose (5)`, by its 1-based position; each change a finding. A repaired
+ * name that another header already has gets `(again)`, so that no given header is ever renamed for its sake and no two columns share a name.
+ * @param header trimmed
+ */
 export function nameColumns(header: readonly string[]): { readonly names: string[]; readonly findings: Finding[] } {
   const findings: Finding[] = [];
-  const trimmed = header.map((cell) => cell.trim());
-  const given = new Set(trimmed);
+  const given = new Set(header);
   const taken = new Set<string>();
-  const names = trimmed.map((original, i) => {
+  const names = header.map((original, i) => {
     if (original !== "" && !taken.has(original)) {
       taken.add(original);
       return original;

@@ -6,7 +6,8 @@ export type Finding =
   // — reading —
   | { code: "duplicate-header"; column: string; original: string }
   | { code: "empty-header"; column: string }
-  | { code: "unreadable-cells"; column: string; lines: number[]; examples: string[] }
+  /** Cells that are no number, or no date where the column is one of `dates`. */
+  | { code: "unreadable-cells"; column: string; lines: number[]; examples: string[]; dates?: true }
   | { code: "beyond-double-range"; column: string; lines: number[] }
   | { code: "short-rows"; lines: number[] }
   | { code: "long-rows"; lines: number[] }
@@ -57,9 +58,11 @@ export type Problem = {
   | { code: "file-missing" }
   | { code: "file-unreadable"; detail: string }
   | { code: "file-empty" }
-  | { code: "no-data-rows" }
+  /** `setAside`: rows there are, but all of them longer than the header. */
+  | { code: "no-data-rows"; setAside?: number }
   | { code: "bad-encoding" }
   | { code: "open-quote" }
+  | { code: "stray-quote" }
   | { code: "too-many-columns"; columns: number; limit: number }
   | { code: "too-large"; bytes: number; limit: number }
   | { code: "one-column" }

@@ -36,7 +36,7 @@ export interface NumberColumn {
 export interface CategoryColumn {
   readonly kind: "category" | "yes/no" | "text";
   readonly name: string;
-  /** Distinct cell texts in natural order (see engine/question/natural). */
+  /** Distinct cell texts in natural order (see engine/question/natural); of text in order of appearance, since nobody reads it as a list. */
   readonly levels: readonly string[];
   /** Index into `levels`, one a row; -1 marks a missing cell. */
   readonly codes: Int32Array;

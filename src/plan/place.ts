@@ -39,6 +39,7 @@ export function placeOf(problem: Problem, plan: Plan, occurrence = 0): Path | nu
     case "no-data-rows":
     case "bad-encoding":
     case "open-quote":
+    case "stray-quote":
     case "too-many-columns":
     case "too-large":
     case "one-column":

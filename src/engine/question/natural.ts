@@ -1,34 +1,56 @@
 /**
  * Natural order of level names: runs of digits compare as numbers, letter case is ignored, ties go by code point.
- * Negative before, zero when the same string, positive after.
+ * Negative before, zero when the same string, positive after. A total order.
  */
 export function naturalCompare(a: string, b: string): number {
-  const left = pieces(a);
-  const right = pieces(b);
-  for (let i = 0; i < Math.min(left.length, right.length); i++) {
-    const [x, y] = [left[i], right[i]];
-    if (isDigits(x) && isDigits(y)) {
-      const byLength = significant(x).length - significant(y).length;
-      if (byLength !== 0) return byLength;
-      if (significant(x) !== significant(y)) return significant(x) < significant(y) ? -1 : 1;
-    } else {
-      const [u, v] = [x.toLowerCase(), y.toLowerCase()];
-      if (u !== v) return byCodePoint(u, v);
-    }
-  }
-  return left.length - right.length || byCodePoint(a, b);
+  return compareKeys(keyOf(a), keyOf(b));
 }
 
-const pieces = (text: string): string[] => text.match(/\d+|\D+/g) ?? [];
-const isDigits = (text: string): boolean => /^\d/.test(text);
-const significant = (digits: string): string => digits.replace(/^0+(?=\d)/, "");
+/** The indexes of the texts in natural order; every text is taken apart once. */
+export function naturalSort(texts: readonly string[]): number[] {
+  const keys = texts.map(keyOf);
+  return texts.map((_, i) => i).sort((i, j) => compareKeys(keys[i], keys[j]));
+}
 
+interface Key {
+  readonly text: string;
+  /** Runs of digits without leading zeros, and what stands between them in lower case. */
+  readonly pieces: readonly string[];
+  /** Whether the first piece is a run of digits; they alternate. */
+  readonly digitsFirst: boolean;
+}
+
+function keyOf(text: string): Key {
+  const pieces = text.match(/[0-9]+|[^0-9]+/g) ?? [];
+  const digitsFirst = /^[0-9]/.test(text);
+  return {
+    text,
+    digitsFirst,
+    pieces: pieces.map((piece, i) => ((i % 2 === 0) === digitsFirst ? piece.replace(/^0+(?=.)/, "") : piece.toLowerCase())),
+  };
+}
+
+function compareKeys(a: Key, b: Key): number {
+  const shared = Math.min(a.pieces.length, b.pieces.length);
+  for (let i = 0; i < shared; i++) {
+    const x = a.pieces[i];
+    const y = b.pieces[i];
+    if (x === y) continue;
+    const digits = a.digitsFirst === b.digitsFirst && (i % 2 === 0) === a.digitsFirst;
+    return (digits && x.length - y.length) || byCodePoint(x, y);
+  }
+  return a.pieces.length - b.pieces.length || byCodePoint(a.text, b.text);
+}
+
+/** By code point: UTF-16 order differs from it where a surrogate meets one of U+E000 to U+FFFF. */
 function byCodePoint(a: string, b: string): number {
-  const x = [...a];
-  const y = [...b];
-  for (let i = 0; i < Math.min(x.length, y.length); i++) {
-    const step = x[i].codePointAt(0)! - y[i].codePointAt(0)!;
-    if (step !== 0) return step;
+  const shared = Math.min(a.length, b.length);
+  for (let i = 0; i < shared; i++) {
+    const x = a.charCodeAt(i);
+    const y = b.charCodeAt(i);
+    if (x !== y) return lift(x) - lift(y);
   }
-  return x.length - y.length;
+  return a.length - b.length;
 }
+
+const lift = (unit: number): number => (unit < 0xd800 ? unit : unit >= 0xe000 ? unit - 0x800 : unit + 0x2000);

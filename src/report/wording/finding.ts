@@ -19,7 +19,7 @@ export function sayFinding(finding: Finding, { sets }: Pick<Comparison, "sets">,
     case "empty-header":
       return `A column without a header is called ${word(finding.column)}.`;
     case "unreadable-cells":
-      return `${cells(finding.lines)} of ${name(finding.column)} ${finding.lines.length === 1 ? "is" : "are"} no number (${finding.examples.map(word).join(", ")}) and ${finding.lines.length === 1 ? "counts" : "count"} as missing: ${lines(finding.lines)}.`;
+      return `${cells(finding.lines)} of ${name(finding.column)} ${finding.lines.length === 1 ? "is" : "are"} no ${finding.dates ? "date" : "number"} (${finding.examples.map(word).join(", ")}) and ${finding.lines.length === 1 ? "counts" : "count"} as missing: ${lines(finding.lines)}.`;
     case "beyond-double-range":
       return `${cells(finding.lines)} of ${name(finding.column)} ${finding.lines.length === 1 ? "is" : "are"} too large to be read and ${finding.lines.length === 1 ? "counts" : "count"} as missing: ${lines(finding.lines)}.`;
     case "short-rows":

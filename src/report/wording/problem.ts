@@ -18,11 +18,15 @@ function what(problem: Problem): string {
     case "file-empty":
       return "the file is empty.";
     case "no-data-rows":
-      return "there is a header but no row of data below it.";
+      return problem.setAside === undefined
+        ? "there is a header but no row of data below it."
+        : "every row has more cells than the header, so none of them can be read; is the first line the header?";
     case "bad-encoding":
       return "the text is not UTF-8 or UTF-16; save the file as UTF-8.";
     case "open-quote":
       return "a quoted cell starts here and never ends; close the quote.";
+    case "stray-quote":
+      return "a quoted cell starts here and goes on after its closing quote; a quote inside a quoted cell is written twice.";
     case "too-many-columns":
       return `there are ${count(problem.columns)} columns, more than the ${count(problem.limit)} that can be read; is this a table?`;
     case "too-large":
