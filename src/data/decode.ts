@@ -30,16 +30,23 @@ function encodingOf(bytes: Uint8Array): "utf-8" | "utf-16le" | "utf-16be" {
   if (bytes[0] === 0xff && bytes[1] === 0xfe) return "utf-16le";
   if (bytes[0] === 0xfe && bytes[1] === 0xff) return "utf-16be";
   // Separators, digits and line ends have a zero byte in UTF-16, always on the same side; in UTF-8 no character of a text has one.
-  const look = Math.min(bytes.length & ~1, LOOK);
-  let even = 0;
-  let odd = 0;
-  for (let i = 0; i < look; i += 2) {
-    if (bytes[i] === 0) even++;
-    if (bytes[i + 1] === 0) odd++;
+  const look = bytes.subarray(0, Math.min(bytes.length & ~1, LOOK));
+  if (isWide(look, 1)) return "utf-16le";
+  return isWide(look, 0) ? "utf-16be" : "utf-8";
+}
+
+/** Whether the bytes look like UTF-16 whose high bytes stand at odd (1) or even (0) places: zeros there and nowhere else, a line end among them. */
+function isWide(look: Uint8Array, high: 0 | 1): boolean {
+  let zeros = 0;
+  let hasLineEnd = false;
+  for (let i = 0; i < look.length; i += 2) {
+    const low = look[i + 1 - high];
+    if (low === 0) return false;
+    if (look[i + high] !== 0) continue;
+    zeros++;
+    hasLineEnd ||= low === LF || low === CR;
   }
-  if (even === 0 && odd * 20 > look) return "utf-16le";
-  if (odd === 0 && even * 20 > look) return "utf-16be";
-  return "utf-8";
+  return hasLineEnd && zeros * 20 > look.length;
 }
 
 /** Line of the first bytes that are not UTF-8. A line end is never part of a longer sequence, so lines can be tried one by one. */
