@@ -60,7 +60,8 @@ export interface SetResult {
   readonly joint: { readonly statistic: number; readonly df: readonly [number, number]; readonly p: number } | null;
   readonly slopes: readonly SlopesTest[];
   readonly model: readonly { readonly term: Term; readonly estimate: number; readonly standardError: number | null }[];
-  readonly setAside: readonly { readonly column: string; readonly combinationOf: readonly string[] }[];
+  /** `part`: other design columns of the covariate stay in the fit; `combinationOf` then is empty where these alone determine it. */
+  readonly setAside: readonly { readonly column: string; readonly combinationOf: readonly string[]; readonly part?: true }[];
 }
 
 export interface SlopesTest {

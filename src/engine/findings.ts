@@ -29,7 +29,8 @@ export type Finding =
   | { code: "exact-fit"; set: number }
   | { code: "leverage-one"; set: number; lines: number[]; fallback: "HC1" | null }
   | { code: "standard-error-missing"; set: number; why: "no-residual-df" | "one-cluster" | "not-finite" }
-  | { code: "set-aside"; set: number; column: string; combinationOf: string[] }
+  /** `part`: other design columns of the covariate (levels, powers, knots) stay in the fit. */
+  | { code: "set-aside"; set: number; column: string; combinationOf: string[]; part?: true }
   | { code: "base-varies" }
   // — slopes —
   | { code: "no-shared-range"; set: number; modifier: string }

@@ -23,6 +23,7 @@ export function findProblems(table: Table, plan: Plan): Problem[] {
     ...outcomeProblems(table, plan),
     ...exposureProblems(table, plan),
     ...covariateProblems(table, plan),
+    ...keepProblems(table, plan),
     ...otherProblems(table, plan),
   ];
 }
@@ -34,6 +35,8 @@ function repeated(plan: Plan): Problem[] {
   add(plan.exposure.column, "exposure");
   for (const column of adjustmentColumns(plan)) add(column, "covariate");
   if (plan.weights) add(plan.weights, "weights");
+  // Errors clustered by the outcome or by the weights answer no question; by the exposure or a covariate they may.
+  if (plan.cluster === plan.outcome.column || (plan.cluster && plan.cluster === plan.weights)) add(plan.cluster, "cluster");
   const problems: Problem[] = [];
   for (const [column, all] of roles) if (all.length > 1) problems.push({ code: "named-twice", column, roles: all });
   const listed = (plan.covariates ?? []).map((c) => c.column);
@@ -45,7 +48,10 @@ function repeated(plan: Plan): Problem[] {
 
 function outcomeProblems(table: Table, { outcome }: Plan): Problem[] {
   const column = findColumn(table, outcome.column)!;
-  if (isAmount(column)) return [];
+  if (isAmount(column)) {
+    if (outcome.kind !== "binary" || distinctValues(column.values, 2)) return [];
+    return [{ code: "too-many-levels", column: column.name, role: "outcome", levels: asGroups(column).levels.length, limit: 2 }];
+  }
   const { levels } = asGroups(column);
   if (levels.length === 2 && outcome.form !== "log" && outcome.kind !== "count" && outcome.kind !== "amount") return [];
   return [{ code: "not-numeric", column: column.name, role: "outcome", example: levels[0] ?? "" }];
@@ -111,6 +117,22 @@ function covariateProblems(table: Table, plan: Plan): Problem[] {
     }
   }
   return problems;
+}
+
+/** Restrictions that could not do what they say: a range of words, a level there is not. */
+function keepProblems(table: Table, plan: Plan): Problem[] {
+  return (plan.keep ?? []).flatMap((rule): Problem[] => {
+    const column = findColumn(table, rule.column)!;
+    if (isAmount(column)) return [];
+    const { levels } = column;
+    if ("from" in rule || "to" in rule)
+      return [{ code: "not-numeric", column: column.name, role: "keep", example: levels[0] ?? "" }];
+    // `not` may name a level that is gone: there is nothing left to keep out.
+    const only = "only" in rule ? rule.only.map(String) : [];
+    return only
+      .filter((level) => !levels.includes(level))
+      .map((level) => ({ code: "unknown-level", column: column.name, level, levels: [...levels] }));
+  });
 }
 
 function otherProblems(table: Table, plan: Plan): Problem[] {

@@ -43,7 +43,7 @@ export function resolveQuestion(table: Table, plan: Plan): Resolved {
   const outcome = resolveOutcome(table, plan, findings);
   const exposure = resolveExposure(table, plan);
   const sets = listSets(plan);
-  const modifiers = [...(plan.modifiers ?? [...new Set(sets.flat())])];
+  const modifiers = [...new Set(plan.modifiers ?? sets.flat())];
   const sources = new Map<string, Source>();
   for (const name of new Set([...sets.flat(), ...modifiers, ...adjustmentColumns(plan)])) {
     if (!sets.some((s) => s.includes(name)) && !modifiers.includes(name)) continue;
@@ -78,7 +78,7 @@ export function resolveQuestion(table: Table, plan: Plan): Resolved {
     slopesAlpha: plan.slopesAlpha ?? 0.05,
     cluster: plan.cluster ?? null,
     weights: plan.weights ?? null,
-    always: [...(plan.always ?? [])],
+    always: [...new Set(plan.always ?? [])],
     modifiers,
   };
   const cluster = plan.cluster ? asGroups(findColumn(table, plan.cluster)!) : null;

@@ -6,13 +6,16 @@ import type { Fit } from "../linear/types";
 import { tCritical, tTwoSided } from "../probability";
 import type { SetFit } from "./set";
 
+/** Below this doubles lose digits. */
+const SMALLEST = 2 ** -1022;
+
 /** A contrast's estimate with error, interval and p. An exact fit has error 0, the point as its interval, and no p. */
 export function estimateOf({ fit, cov }: SetFit, { column, factor }: ContrastColumn, level: number): Estimate {
   const combination = Float64Array.from(fit.columns, (c) => (c === column ? factor : 0));
   const estimate = fit.coefficients[fit.columns.indexOf(column)] * factor;
   if (!cov) return { estimate, standardError: null, df: null, interval: null, p: null };
   const exact = fit.residualSumOfSquares === 0;
-  const standardError = exact ? 0 : Math.sqrt(quadratic(cov.matrix, combination, combination));
+  const standardError = exact ? 0 : errorOf(cov.matrix, fit, column, factor);
   const df = exact ? fit.residualDf : cov.dfOf(combination);
   if (!Number.isFinite(standardError) || df === null) return { estimate, standardError: null, df: null, interval: null, p: null };
   if (standardError === 0) return { estimate, standardError, df, interval: [estimate, estimate], p: null };
@@ -24,6 +27,14 @@ export function estimateOf({ fit, cov }: SetFit, { column, factor }: ContrastCol
     interval: [estimate - half, estimate + half],
     p: tTwoSided(estimate / standardError, df),
   };
+}
+
+/** NaN where scaling took a positive error below double range: an error of 0 would claim certainty. */
+function errorOf(matrix: Float64Array, fit: Fit, column: number, factor: number): number {
+  const combination = unit(fit, column);
+  const own = Math.sqrt(quadratic(matrix, combination, combination));
+  const scaled = own * Math.abs(factor);
+  return own > 0 && scaled < SMALLEST ? NaN : scaled;
 }
 
 /** Test that all contrasts of several groups are zero; null for fewer than two, or where it cannot be computed. */

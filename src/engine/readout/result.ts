@@ -87,8 +87,18 @@ function readoutOf(input: ResultInput, i: number): Readout {
   return { kind, ...own, shift, change };
 }
 
-/** The fitted table; where the set varies, that of the fit with the interactions, so that no common slope stands in it. */
-function modelOf({ resolved, design, judged, depth }: ResultInput): SetResult["model"] {
+/**
+ * The fitted table; where the set varies, that of the fit with the interactions, so that no common slope stands in it. A group whose contrast
+ * has no number has no row: with another group's column set aside, its coefficient is not against the reference.
+ */
+function modelOf(input: ResultInput): SetResult["model"] {
+  const { design, judged } = input;
+  const refused = new Set(design.contrasts.filter((_, i) => judged.set.reasons[i] !== null).map((c) => c.level));
+  const exposure = design.exposure.basis.column;
+  return tableOf(input).filter(({ term }) => !("column" in term && term.column === exposure && refused.has(term.level ?? null)));
+}
+
+function tableOf({ resolved, design, judged, depth }: ResultInput): ReturnType<typeof modelRows> {
   const { set, slopes } = judged;
   if (slopes.varies) {
     const { fit, cov, modifiers } = slopes.varies.joint;

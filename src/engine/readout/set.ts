@@ -1,3 +1,4 @@
+import type { SetResult } from "../comparison";
 import type { ContrastColumn, Design } from "../design/types";
 import { covariance } from "../errors/covariance";
 import { lightErrors } from "../errors/light";
@@ -21,7 +22,7 @@ export interface SetFit {
   /** Null where there are no residual degrees of freedom, or one cluster. */
   readonly cov: Covariance | null;
   /** Covariate columns set aside, by covariate name, with the covariates they are a combination of. */
-  readonly setAside: readonly { readonly column: string; readonly combinationOf: readonly string[] }[];
+  readonly setAside: SetResult["setAside"];
   /** Why a contrast has no number, aligned with design.contrasts; null where it has. */
   readonly reasons: readonly (Reason | null)[];
 }
@@ -50,6 +51,7 @@ export function fitSet(design: Design, factor: Factor, columns: readonly string[
     cov: enough ? errorsOf(frame, fit, variance, depth, exposure) : null,
     setAside: mergeAside(
       aside.map(({ column, combinationOf }) => ({ column: owner(column), combinationOf: unique(combinationOf.map(owner)) })),
+      new Set(first.columns.map(owner)),
     ),
     reasons: contrasts.map((contrast) => tooFew ?? reasonFor(design, contrast, fit, owner)),
   };
@@ -92,14 +94,18 @@ function ownerOf(design: Design): (column: number) => string {
 }
 
 /** One entry a covariate: several of its columns may have gone. */
-function mergeAside(list: { column: string; combinationOf: string[] }[]): SetFit["setAside"] {
+function mergeAside(list: { column: string; combinationOf: string[] }[], fitted: ReadonlySet<string>): SetFit["setAside"] {
   const merged = new Map<string, string[]>();
   for (const { column, combinationOf } of list)
     merged.set(
       column,
       unique([...(merged.get(column) ?? []), ...combinationOf]).filter((c) => c !== column),
     );
-  return [...merged].map(([column, combinationOf]) => ({ column, combinationOf }));
+  return [...merged].map(([column, combinationOf]) => ({
+    column,
+    combinationOf,
+    ...(fitted.has(column) ? { part: true as const } : {}),
+  }));
 }
 
 const unique = (names: readonly string[]): string[] => [...new Set(names)];

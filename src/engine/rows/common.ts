@@ -24,15 +24,9 @@ export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
   const lost = new Map<string, number>();
   const usable = new Uint8Array(n).fill(1);
   const kept = new Uint8Array(n).fill(1);
-  const lose = (column: string, gone: (i: number) => boolean) => {
-    let count = 0;
-    for (let i = 0; i < n; i++) {
-      if (!gone(i)) continue;
-      usable[i] = 0;
-      count++;
-    }
-    if (count > 0) lost.set(column, (lost.get(column) ?? 0) + count);
-  };
+  // A column may stand in several places (kept by and held fixed, say); a row is lost to it once.
+  const losses = new Map<string, ((i: number) => boolean)[]>();
+  const lose = (column: string, gone: (i: number) => boolean) => losses.set(column, [...(losses.get(column) ?? []), gone]);
   for (const rule of plan.keep ?? []) {
     const out = fails(table, rule);
     lose(rule.column, out);
@@ -47,6 +41,15 @@ export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
   if (cluster) needed.push([resolved.question.cluster!, (i) => cluster.codes[i] < 0]);
   for (const [column, gone] of needed) lose(column, gone);
   for (const [column, source] of sources) lose(column, missingIn(source));
+  for (const [column, tests] of losses) {
+    let count = 0;
+    for (let i = 0; i < n; i++) {
+      if (!tests.some((gone) => gone(i))) continue;
+      usable[i] = 0;
+      count++;
+    }
+    if (count > 0) lost.set(column, count);
+  }
   const common = indexes(n, (i) => usable[i] === 1);
   const own = (set: number): Int32Array => {
     // No modifier or covariate beyond the set's own has cost a row: the common rows are the set's own.

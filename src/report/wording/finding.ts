@@ -59,6 +59,10 @@ export function sayFinding(finding: Finding, { sets }: Pick<Comparison, "sets">,
     case "standard-error-missing":
       return `${set(finding.set)} there is no standard error: ${missingError(finding.why)}.`;
     case "set-aside":
+      if (finding.part) {
+        const by = finding.combinationOf.length > 0 ? names(finding.combinationOf) : "the rest of it";
+        return `${set(finding.set)}, part of ${name(finding.column)} is left out: ${by} already ${finding.combinationOf.length > 1 ? "determine" : "determines"} it.`;
+      }
       return finding.combinationOf.length > 0
         ? `${set(finding.set)}, ${name(finding.column)} is left out: ${names(finding.combinationOf)} already ${finding.combinationOf.length === 1 ? "determines" : "determine"} it.`
         : `${set(finding.set)}, ${name(finding.column)} is left out: it does not vary.`;
