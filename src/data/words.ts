@@ -27,16 +27,27 @@ export function wordColumn(name: string, cells: readonly string[], missing: Uint
 /**
  * A word column from its distinct cells in order of appearance: levels in natural order (text keeps the order of appearance), the kind by
  * how many there are.
- * @param codes changed in place to the arranged levels; @param filled cells that are not missing
+ * @param codes changed in place to the arranged levels; @param filled cells that are not missing; @param gone which of `found` are missing cells
  */
-export function arrangeWords(name: string, found: readonly string[], codes: Int32Array, filled: number): CategoryColumn {
-  if (found.length > TEXT_LEVELS && found.length > TEXT_SHARE * filled) return { kind: "text", name, levels: found, codes };
-  const order = naturalSort(found);
-  const place = new Int32Array(found.length);
-  order.forEach((code, at) => (place[code] = at));
-  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) codes[i] = place[codes[i]];
+export function arrangeWords(
+  name: string,
+  found: readonly string[],
+  codes: Int32Array,
+  filled: number,
+  gone: readonly boolean[] = [],
+): CategoryColumn {
+  const kept = found.map((_, code) => code).filter((code) => !gone[code]);
+  const isText = kept.length > TEXT_LEVELS && kept.length > TEXT_SHARE * filled;
+  const order = isText ? kept : naturalSort(found, kept);
   const levels = order.map((code) => found[code]);
-  return { kind: isYesNo(levels) ? "yes/no" : "category", name, levels, codes };
+  const place = new Int32Array(found.length).fill(-1);
+  order.forEach((code, at) => (place[code] = at));
+  recode(codes, place);
+  return { kind: isText ? "text" : isYesNo(levels) ? "yes/no" : "category", name, levels, codes };
+}
+
+function recode(codes: Int32Array, place: Int32Array): void {
+  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) codes[i] = place[codes[i]];
 }
 
 function isYesNo(levels: readonly string[]): boolean {

@@ -132,8 +132,8 @@ export const CORPUS: Record<string, Expected> = {
   "prototype.csv": {
     columns: {
       ["__proto__"]: ["number", 1, 3],
-      constructor: ["number", 2, 4],
-      toString: ["category", "hasOwnProperty", "__proto__"],
+      constructor: ["number", 2, 4] as ShownColumn,
+      toString: ["category", "hasOwnProperty", "__proto__"] as ShownColumn,
     },
   },
   "hostile.csv": {

@@ -1,7 +1,7 @@
 import { textIn } from "./line";
 
-/** Seed and factor of the hash (FNV-1a, public domain). */
-export const [HASH_SEED, HASH_FACTOR] = [0x811c9dc5 | 0, 0x01000193];
+/** Seed and factor of the hash (FNV-1a, public domain), and the bits of it that are used: more would not be small integers everywhere. */
+export const [HASH_SEED, HASH_FACTOR, HASH_BITS] = [0x811c9dc5 | 0, 0x01000193, 0x3fffffff];
 
 /** Distinct byte strings of one column, numbered in order of appearance, with their bytes; decoded once at the end. */
 export class Dictionary {
@@ -14,7 +14,7 @@ export class Dictionary {
   /** Row that brought the newest entry. */
   private newest = -1;
 
-  /** The number of the cell in bytes [from, to), which stands in `row`. @param hash FNV-1a of the bytes */
+  /** The number of the cell in bytes [from, to), which stands in `row`. @param hash FNV-1a of the bytes, HASH_BITS of it */
   code(bytes: Uint8Array, from: number, to: number, hash: number, row: number): number {
     const mask = this.table.length - 1;
     for (let at = (hash ^ (hash >>> 15)) & mask; ; at = (at + 1) & mask) {

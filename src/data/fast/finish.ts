@@ -17,7 +17,7 @@ export function finishNumbers(
   for (const [row, text] of odd) (numberIn(text, "point") === null ? bad : beyond).push(row);
   if (bad.length > 0) {
     let filled = odd.size;
-    for (const value of values) if (value === value) filled++;
+    for (let i = 0; i < values.length; i++) if (values[i] === values[i]) filled++;
     if (!isMostly(bad.length, filled)) return null;
   }
   const findings: Finding[] = [];
@@ -39,50 +39,55 @@ export function finishWords(
   isMissing: (cell: string) => boolean,
 ): Typed | null {
   if (!texts || texts.some((text) => text !== text.trim())) return null;
-  const counts = new Int32Array(texts.length);
-  for (const code of codes) if (code >= 0) counts[code]++;
+  const counts = countCodes(codes, texts.length);
   const gone = texts.map(isMissing);
-  let filled = 0;
-  counts.forEach((count, code) => (filled += gone[code] ? 0 : count));
   const numbers = texts.map((text, code) => (gone[code] ? null : numberIn(text, "point")));
   if (numbers.some((found) => found?.thousands)) return null;
-  const failing = (test: (code: number) => boolean) =>
-    counts.reduce((sum, count, code) => sum + (gone[code] || test(code) ? 0 : count), 0);
-  const valueOf = (values: readonly (number | null)[]) =>
-    Float64Array.from(codes, (code) => (code < 0 ? NaN : (values[code] ?? NaN)));
-
-  if (
-    filled === 0 ||
-    isMostly(
-      failing((code) => numbers[code] !== null),
-      filled,
-    )
-  ) {
+  let filled = 0;
+  let noNumbers = 0;
+  for (let code = 0; code < texts.length; code++) {
+    if (gone[code]) continue;
+    filled += counts[code];
+    if (numbers[code] === null) noNumbers += counts[code];
+  }
+  if (filled === 0 || isMostly(noNumbers, filled)) {
+    const value = numbers.map((found) => (found && Number.isFinite(found.value) ? found.value : NaN));
     const odd = new Map<number, string>();
-    codes.forEach((code, row) => {
-      if (code >= 0 && !gone[code] && !Number.isFinite(numbers[code]?.value)) odd.set(row, texts[code]);
-    });
-    const finite = numbers.map((found) => (found && Number.isFinite(found.value) ? found.value : null));
-    return finishNumbers(name, valueOf(finite), odd, lines);
+    for (const row of rowsOf(codes, (code) => !gone[code] && value[code] !== value[code])) odd.set(row, texts[codes[row]]);
+    return finishNumbers(name, translated(codes, value), odd, lines);
   }
-  const days = texts.map((text, code) => (gone[code] ? null : isoDay(text)));
+  const days = texts.map((text, code) => (gone[code] ? NaN : (isoDay(text) ?? NaN)));
+  const isNoDay = (code: number) => !gone[code] && days[code] !== days[code];
   if (
     isMostly(
-      failing((code) => days[code] !== null),
+      days.reduce((sum, _, code) => sum + (isNoDay(code) ? counts[code] : 0), 0),
       filled,
     )
   ) {
-    const bad: number[] = [];
-    codes.forEach((code, row) => {
-      if (code >= 0 && !gone[code] && days[code] === null) bad.push(row);
-    });
+    const bad = rowsOf(codes, isNoDay);
     const findings = bad.length > 0 ? [unreadable(name, bad, (row) => texts[codes[row]], lines, true)] : [];
-    return { column: { kind: "date", name, values: valueOf(days) }, findings };
+    return { column: { kind: "date", name, values: translated(codes, days) }, findings };
   }
-  if (!gone.includes(true)) return { column: arrangeWords(name, texts, codes, filled), findings: [] };
-  const place = new Int32Array(texts.length).fill(-1);
-  const kept = texts.filter((_, code) => !gone[code]);
-  for (let code = 0, at = 0; code < texts.length; code++) if (!gone[code]) place[code] = at++;
-  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) codes[i] = place[codes[i]];
-  return { column: arrangeWords(name, kept, codes, filled), findings: [] };
+  return { column: arrangeWords(name, texts, codes, filled, gone), findings: [] };
+}
+
+/** How often each code occurs. */
+function countCodes(codes: Int32Array, size: number): Int32Array {
+  const counts = new Int32Array(size);
+  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0) counts[codes[i]]++;
+  return counts;
+}
+
+/** Each row's value by its code; NaN without one. */
+function translated(codes: Int32Array, values: readonly number[]): Float64Array {
+  const out = new Float64Array(codes.length);
+  for (let i = 0; i < codes.length; i++) out[i] = codes[i] < 0 ? NaN : values[codes[i]];
+  return out;
+}
+
+/** Rows with a code that passes, in order. */
+function rowsOf(codes: Int32Array, passes: (code: number) => boolean): number[] {
+  const rows: number[] = [];
+  for (let i = 0; i < codes.length; i++) if (codes[i] >= 0 && passes(codes[i])) rows.push(i);
+  return rows;
 }

@@ -50,10 +50,11 @@ export function splitLine(bytes: Uint8Array, at: number, separator: number): { c
   }
 }
 
-/** Text of bytes [from, to) as it stands, null where they are not UTF-8. */
+/** Text of bytes [from, to) as it stands, null where they are not UTF-8 or hold a zero character. */
 export function textIn(bytes: Uint8Array, from: number, to: number): string | null {
   try {
-    return decoder.decode(bytes.subarray(from, to));
+    const text = decoder.decode(bytes.subarray(from, to));
+    return text.includes("\0") ? null : text;
   } catch {
     return null;
   }

@@ -1,6 +1,6 @@
 import type { MissingTest } from "../missing";
 import { numberIn } from "../number";
-import { Dictionary, HASH_FACTOR, HASH_SEED } from "./dictionary";
+import { Dictionary, HASH_BITS, HASH_FACTOR, HASH_SEED } from "./dictionary";
 import { CR, LF, QUOTE, findCell, isSpace, splitLine, textIn } from "./line";
 import type { Span } from "./line";
 import type { Look } from "./look";
@@ -65,8 +65,11 @@ export class Scanner {
     const { numeric, separator } = this.look;
     const { numbers: marks } = this.missing;
     const hasMarks = marks.size > 0;
+    const { numbers, codes, words } = this;
+    // What ends a cell (1) or makes it other than common (2).
     const stops = new Uint8Array(256);
-    for (const byte of [separator, LF, CR, QUOTE]) stops[byte] = 1;
+    for (const byte of [separator, LF, CR]) stops[byte] = 1;
+    stops[QUOTE] = 2;
     let at = from;
     while (at < to) {
       if (this.rows === this.capacity) this.grow();
@@ -98,15 +101,15 @@ export class Scanner {
             decimals = i - point;
             digits += decimals;
           }
-          if (stops[byte] === 1 && byte !== QUOTE && digits > 0) {
+          if (stops[byte] === 1 && digits > 0) {
             let value: number;
             if (digits <= SHORT) {
               value = decimals === 0 ? whole : whole / POWERS[decimals];
               if (negative) value = -value;
             } else value = parseNumber(bytes, at, i);
             if (value - value !== 0 || (hasMarks && marks.has(value))) i = this.number(bytes, at, c, row);
-            else this.numbers[c][row] = value;
-          } else if (i === at && stops[byte] === 1 && byte !== QUOTE) this.numbers[c][row] = NaN;
+            else numbers[c][row] = value;
+          } else if (i === at && stops[byte] === 1) numbers[c][row] = NaN;
           else i = this.number(bytes, at, c, row);
         } else {
           let hash = HASH_SEED;
@@ -115,7 +118,7 @@ export class Scanner {
             byte = bytes[++i];
           }
           if (byte === QUOTE || (i > at && (isSpace(bytes[at]) || isSpace(bytes[i - 1])))) i = this.word(bytes, at, c, row);
-          else this.codes[c][row] = i === at ? -1 : this.words[c].code(bytes, at, i, hash, row);
+          else codes[c][row] = i === at ? -1 : words[c].code(bytes, at, i, hash & HASH_BITS, row);
         }
         if (i < 0) return false;
         c++;
@@ -168,7 +171,7 @@ export class Scanner {
     const { from, to, end } = this.span;
     let hash = HASH_SEED;
     for (let i = from; i < to; i++) hash = Math.imul(hash ^ bytes[i], HASH_FACTOR);
-    this.codes[c][row] = from === to ? -1 : this.words[c].code(bytes, from, to, hash, row);
+    this.codes[c][row] = from === to ? -1 : this.words[c].code(bytes, from, to, hash & HASH_BITS, row);
     return end;
   }
 

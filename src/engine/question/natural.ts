@@ -6,10 +6,10 @@ export function naturalCompare(a: string, b: string): number {
   return compareKeys(keyOf(a), keyOf(b));
 }
 
-/** The indexes of the texts in natural order; every text is taken apart once. */
-export function naturalSort(texts: readonly string[]): number[] {
+/** Some indexes of the texts, by default all, in the natural order of their texts; every text is taken apart once. */
+export function naturalSort(texts: readonly string[], indexes: readonly number[] = texts.map((_, i) => i)): number[] {
   const keys = texts.map(keyOf);
-  return texts.map((_, i) => i).sort((i, j) => compareKeys(keys[i], keys[j]));
+  return [...indexes].sort((i, j) => compareKeys(keys[i], keys[j]));
 }
 
 interface Key {
