@@ -23,7 +23,14 @@ export function missingTest(marks?: Plan["missing"]): MissingTest {
   );
   const texts = new Set<string>(only ? ["", ...own] : [...MISSING_MARKS, ...own]);
   const numbers = new Set(own.map(plainNumber).filter((value) => Number.isFinite(value)));
-  const isMissing = (cell: string): boolean =>
-    texts.has(cell) || texts.has(cell.toLowerCase()) || (numbers.size > 0 && numbers.has(plainNumber(cell)));
+  // Most cells are no mark by their length or their first character.
+  const longest = Math.max(...[...texts].map((text) => text.length));
+  const firsts = new Set([...texts].map((text) => text.slice(0, 1)));
+  const isText = (cell: string): boolean => {
+    if (cell === "") return true;
+    if (cell.length > longest || !firsts.has(cell[0].toLowerCase())) return false;
+    return texts.has(cell) || texts.has(cell.toLowerCase());
+  };
+  const isMissing = (cell: string): boolean => isText(cell) || (numbers.size > 0 && numbers.has(plainNumber(cell)));
   return { isMissing, numbers };
 }

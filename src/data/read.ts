@@ -1,6 +1,6 @@
 import type { Finding, Problem } from "../engine/findings";
 import type { Plan } from "../engine/plan";
-import type { Source, Table } from "../engine/table";
+import type { Column, Source, Table } from "../engine/table";
 import { typeColumn } from "./column";
 import { decode } from "./decode";
 import type { ReaderMemory } from "./fast/memory";
@@ -58,12 +58,17 @@ export function readGeneral(bytes: Uint8Array, { file, missing }: ReadOptions): 
     const cells = rows.map((row) => row[c]);
     const style = styles?.[c] ?? "point";
     const typed = typeColumn(name, cells, lines, isMissing, style);
-    commas ||= style === "comma" && typed.column.kind === "number" && cells.some((cell) => cell.includes(","));
+    commas ||= style === "comma" && hasComma(typed.column, cells);
     findings.push(...typed.findings);
     return typed.column;
   });
   if (commas) findings.push({ code: "decimal-comma" });
   return { ok: true, table: { rows: rows.length, columns, lines, source: sourceOf(bytes, file), findings } };
+}
+
+/** Whether a number was read from a cell with a comma. */
+function hasComma(column: Column, cells: readonly string[]): boolean {
+  return column.kind === "number" && cells.some((cell, i) => !Number.isNaN(column.values[i]) && cell.includes(","));
 }
 
 const sourceOf = (bytes: Uint8Array, file: string): Source => ({ file, sha256: fingerprint(bytes), bytes: bytes.length });

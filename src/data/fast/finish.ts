@@ -2,19 +2,25 @@ import type { Finding } from "../../engine/findings";
 import { beyondRange, isMostly, unreadable } from "../column";
 import type { Typed } from "../column";
 import { isoDay } from "../date";
-import { numberIn } from "../number";
+import type { NumberRead } from "../number";
 import { arrangeWords } from "../words";
+import { readAs } from "./decimals";
+import type { Decimals } from "./decimals";
 
-/** A scanned column of numbers; null where too many of its cells are none. @param odd rows that hold no number that a double holds */
+/**
+ * A scanned column of numbers; null where too many of its cells are none.
+ * @param odd rows that hold no number that a double holds; @param decimals how the file's numbers are written
+ */
 export function finishNumbers(
   name: string,
   values: Float64Array,
   odd: ReadonlyMap<number, string>,
   lines: Uint32Array,
+  decimals: Decimals,
 ): Typed | null {
   const bad: number[] = [];
   const beyond: number[] = [];
-  for (const [row, text] of odd) (numberIn(text, "point") === null ? bad : beyond).push(row);
+  for (const [row, text] of odd) (readAs(text, decimals) === null ? bad : beyond).push(row);
   if (bad.length > 0) {
     let filled = odd.size;
     for (let i = 0; i < values.length; i++) if (values[i] === values[i]) filled++;
@@ -28,7 +34,7 @@ export function finishNumbers(
 
 /**
  * A scanned column of words: whatever the general reader would make of it. Null where it alone can tell: bytes that are no text, blanks wider
- * than a byte around a cell, thousands marks.
+ * than a byte around a cell, cells that `readAs` is unsure of.
  * @param codes one a row, by order of appearance in `texts`; changed in place
  */
 export function finishWords(
@@ -37,12 +43,17 @@ export function finishWords(
   texts: readonly string[] | null,
   lines: Uint32Array,
   isMissing: (cell: string) => boolean,
-): Typed | null {
+  decimals: Decimals,
+): (Typed & { readonly marked?: boolean }) | null {
   if (!texts || texts.some((text) => text !== text.trim())) return null;
   const counts = countCodes(codes, texts.length);
   const gone = texts.map(isMissing);
-  const numbers = texts.map((text, code) => (gone[code] ? null : numberIn(text, "point")));
-  if (numbers.some((found) => found?.thousands)) return null;
+  const numbers: (NumberRead | null)[] = [];
+  for (let code = 0; code < texts.length; code++) {
+    const found = gone[code] ? null : readAs(texts[code], decimals);
+    if (found === "unsure") return null;
+    numbers.push(found);
+  }
   let filled = 0;
   let noNumbers = 0;
   for (let code = 0; code < texts.length; code++) {
@@ -54,7 +65,9 @@ export function finishWords(
     const value = numbers.map((found) => (found && Number.isFinite(found.value) ? found.value : NaN));
     const odd = new Map<number, string>();
     for (const row of rowsOf(codes, (code) => !gone[code] && value[code] !== value[code])) odd.set(row, texts[codes[row]]);
-    return finishNumbers(name, translated(codes, value), odd, lines);
+    const typed = finishNumbers(name, translated(codes, value), odd, lines, decimals);
+    const sign = String.fromCharCode(decimals.mark);
+    return typed && { ...typed, marked: texts.some((text, code) => value[code] === value[code] && text.includes(sign)) };
   }
   const days = texts.map((text, code) => (gone[code] ? NaN : (isoDay(text) ?? NaN)));
   const isNoDay = (code: number) => !gone[code] && days[code] !== days[code];

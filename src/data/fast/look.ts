@@ -1,6 +1,7 @@
 import { SEPARATOR_LINES, findSeparator } from "../separator";
-import { LF, splitLine } from "./line";
-import { parseNumber } from "./number";
+import { COMMA, LF, SEMICOLON, splitLine } from "./line";
+import { POINT, parseNumber } from "./number";
+import type { Decimals } from "./decimals";
 
 /** Places in the file and rows at each that are looked at. */
 const PLACES = 8;
@@ -10,6 +11,7 @@ const ROWS = 32;
 export interface Look {
   /** Byte of the separator. */
   readonly separator: number;
+  readonly decimals: Decimals;
   /** Pairs [from, to) of the header's trimmed cells. */
   readonly header: readonly number[];
   /** Where the rows start. */
@@ -25,10 +27,11 @@ export function lookAt(bytes: Uint8Array): Look | null {
   const top = bytes[0] === 0xef && bytes[1] === 0xbb && bytes[2] === 0xbf ? 3 : 0;
   const separator = separatorOf(bytes, top);
   if (separator === null) return null;
+  const open = separator === SEMICOLON && bytes.indexOf(COMMA) >= 0;
   const header = splitLine(bytes, top, separator);
   if (!header || header.cells.length < 4 || header.next >= bytes.length) return null;
   const width = header.cells.length / 2;
-  const good = new Int32Array(width);
+  const good = { point: new Int32Array(width), comma: new Int32Array(width) };
   const filled = new Int32Array(width);
   let seen = 0;
   let size = 0;
@@ -44,13 +47,27 @@ export function lookAt(bytes: Uint8Array): Look | null {
         const [from, to] = [line.cells[2 * c], line.cells[2 * c + 1]];
         if (from === to) continue;
         filled[c]++;
-        if (!Number.isNaN(parseNumber(bytes, from, to))) good[c]++;
+        if (!Number.isNaN(parseNumber(bytes, from, to))) good.point[c]++;
+        if (open && !Number.isNaN(parseNumber(bytes, from, to, COMMA))) good.comma[c]++;
       }
     }
   }
-  const numeric = Uint8Array.from(good, (count, c) => (2 * count > filled[c] || filled[c] === 0 ? 1 : 0));
-  return { separator, header: header.cells, start: header.next, numeric, rows: ((bytes.length - header.next) * seen) / size };
+  const isComma = open && total(good.comma) >= total(good.point);
+  const decimals: Decimals = { mark: isComma ? COMMA : POINT, open };
+  const numeric = Uint8Array.from(isComma ? good.comma : good.point, (count, c) =>
+    2 * count > filled[c] || filled[c] === 0 ? 1 : 0,
+  );
+  return {
+    separator,
+    decimals,
+    header: header.cells,
+    start: header.next,
+    numeric,
+    rows: ((bytes.length - header.next) * seen) / size,
+  };
 }
+
+const total = (counts: Int32Array): number => counts.reduce((sum, count) => sum + count, 0);
 
 /** Start of the line after a place in the rows. */
 function placeOf(bytes: Uint8Array, start: number, place: number): number {

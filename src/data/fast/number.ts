@@ -1,19 +1,21 @@
 /** 10^0 to 10^22: the powers of ten that a double holds exactly. */
 export const POWERS = Float64Array.from({ length: 23 }, (_, i) => Number(`1e${i}`));
 
-const [PLUS, MINUS, POINT] = [43, 45, 46];
+const [PLUS, MINUS] = [43, 45];
+/** The byte of a decimal point. */
+export const POINT = 46;
 /** Digits of a number kept in one half; both halves and their scaling are exact in doubles. */
 const HALF = 9;
 
 /**
- * The number written in bytes [from, to), correctly rounded like Number() of the same text, or NaN where it is none: optional sign, digits with an
+ * The number written in bytes [from, to) with the decimal mark `mark`, correctly rounded like Number() of the same text with a point, or NaN where it is none: optional sign, digits with an
  * optional point, optional exponent. Infinite beyond double range.
  *
  * Up to 15 digits: one exact integer, multiplied or divided once by an exact power of ten (Clinger 1990, "How to read floating point numbers
  * accurately"). 16 to 18 digits, as programs write doubles in full: a quotient in doubled precision, taken where its error bound proves the
  * rounding. Everything else is left to Number().
  */
-export function parseNumber(bytes: Uint8Array, from: number, to: number): number {
+export function parseNumber(bytes: Uint8Array, from: number, to: number, mark: number = POINT): number {
   const negative = bytes[from] === MINUS;
   let i = negative || bytes[from] === PLUS ? from + 1 : from;
   let high = 0;
@@ -29,7 +31,7 @@ export function parseNumber(bytes: Uint8Array, from: number, to: number): number
       digits++;
       if (digits <= HALF) high = high * 10 + digit;
       else if (digits <= 2 * HALF) low = low * 10 + digit;
-    } else if (bytes[i] === POINT && point < 0) point = seen;
+    } else if (bytes[i] === mark && point < 0) point = seen;
     else break;
   }
   if (seen === 0) return NaN;
@@ -40,7 +42,7 @@ export function parseNumber(bytes: Uint8Array, from: number, to: number): number
     exponent += written;
   }
   const value = digits === 0 ? 0 : scale(high, low, digits, exponent);
-  if (value !== value) return Number(textOf(bytes, from, to));
+  if (value !== value) return Number(textOf(bytes, from, to, mark));
   return negative ? -value : value;
 }
 
@@ -95,8 +97,8 @@ function readExponent(bytes: Uint8Array, from: number, to: number): number {
   return negative ? -exponent : exponent;
 }
 
-function textOf(bytes: Uint8Array, from: number, to: number): string {
+function textOf(bytes: Uint8Array, from: number, to: number, mark: number): string {
   let text = "";
-  for (let k = from; k < to; k++) text += String.fromCharCode(bytes[k]);
+  for (let k = from; k < to; k++) text += String.fromCharCode(bytes[k] === mark ? POINT : bytes[k]);
   return text;
 }

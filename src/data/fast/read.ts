@@ -4,7 +4,7 @@ import type { Typed } from "../column";
 import { nameColumns } from "../headers";
 import type { MissingTest } from "../missing";
 import { finishNumbers, finishWords } from "./finish";
-import { COMMA, LF, SEMICOLON, textIn } from "./line";
+import { COMMA, LF, textIn } from "./line";
 import { lookAt } from "./look";
 import type { Look } from "./look";
 import type { ReaderMemory } from "./memory";
@@ -18,7 +18,7 @@ const WIDEST = 20_000;
 
 /**
  * Reads a plain file straight from its bytes: UTF-8, separators , ; tab |, quotes only around a whole cell without a quote or line end inside, LF
- * or CRLF, decimal points. Null for anything else: the general reader then takes the file. It is also the judge: tests hold the two equal cell
+ * or CRLF, one decimal mark. Null for anything else: the general reader then takes the file. It is also the judge: tests hold the two equal cell
  * for cell.
  * @param keep arrays to write the columns into (see readTable)
  */
@@ -26,7 +26,7 @@ export function readFast(given: Uint8Array, missing: MissingTest, keep?: ReaderM
   // One class of array only, whatever was handed in: the loops are compiled for it.
   const bytes = new Uint8Array(given.buffer, given.byteOffset, given.byteLength);
   const look = lookAt(bytes);
-  if (!look || look.numeric.length > WIDEST || (look.separator === SEMICOLON && bytes.indexOf(COMMA) >= 0)) return null;
+  if (!look || look.numeric.length > WIDEST) return null;
   const header: string[] = [];
   for (let k = 0; k < look.header.length; k += 2) {
     const text = textIn(bytes, look.header[k], look.header[k + 1]);
@@ -63,22 +63,34 @@ function readColumns(
   if (long.length > 0) findings.push({ code: "long-rows", lines: long });
   if (blank.length > 0) findings.push({ code: "blank-lines", lines: blank });
   const columns: Column[] = [];
+  let { marked } = scanner;
   const add = (typed: Typed) => {
     columns.push(typed.column);
     findings.push(...typed.findings);
   };
   for (let c = 0; c < names.length; c++) {
     if (look.numeric[c]) {
-      const typed = wrong.has(c) ? null : finishNumbers(names[c], scanner.numbers[c].subarray(0, rows), scanner.odd[c], lines);
+      const typed = wrong.has(c)
+        ? null
+        : finishNumbers(names[c], scanner.numbers[c].subarray(0, rows), scanner.odd[c], lines, look.decimals);
       if (!typed) wrong.add(c);
       else add(typed);
     } else if (wrong.size === 0) {
-      const typed = finishWords(names[c], scanner.codes[c].subarray(0, rows), scanner.words[c].texts(), lines, missing.isMissing);
+      const typed = finishWords(
+        names[c],
+        scanner.codes[c].subarray(0, rows),
+        scanner.words[c].texts(),
+        lines,
+        missing.isMissing,
+        look.decimals,
+      );
       if (!typed) return null;
       add(typed);
+      marked ||= typed.marked === true;
     }
   }
   if (wrong.size > 0) return { wrong };
+  if (marked && look.decimals.mark === COMMA) findings.push({ code: "decimal-comma" });
   return { rows, columns, lines, findings };
 }
 

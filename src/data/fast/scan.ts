@@ -1,5 +1,4 @@
 import type { MissingTest } from "../missing";
-import { numberIn } from "../number";
 import { Dictionary, HASH_BITS, HASH_FACTOR, HASH_SEED } from "./dictionary";
 import { CR, LF, QUOTE, findCell, isSpace, splitLine, textIn } from "./line";
 import type { Span } from "./line";
@@ -7,6 +6,7 @@ import type { Look } from "./look";
 import { takeCodes, takeNumbers } from "./memory";
 import type { ReaderMemory } from "./memory";
 import { POWERS, parseNumber } from "./number";
+import { readAs } from "./decimals";
 
 /** Digits that one 32-bit integer holds. */
 const SHORT = 9;
@@ -32,8 +32,12 @@ export class Scanner {
   readonly long: number[] = [];
   readonly blank: number[] = [];
   lines: Uint32Array;
+  /** Whether any number of a numeric column has a decimal mark. */
+  marked = false;
   /** Columns that turned out to be no numbers while they were read. */
   readonly wrong = new Set<number>();
+  /** Whether `number` read a decimal mark in this row. */
+  private slowMarked = false;
   private line = 1;
   private blankSince: number[] = [];
   private capacity: number;
@@ -63,6 +67,7 @@ export class Scanner {
   scan(bytes: Uint8Array, from: number, to: number): boolean {
     const { width } = this;
     const { numeric, separator } = this.look;
+    const { mark } = this.look.decimals;
     const { numbers: marks } = this.missing;
     const hasMarks = marks.size > 0;
     const { numbers, codes, words } = this;
@@ -77,6 +82,8 @@ export class Scanner {
       const start = at;
       this.line++;
       let c = 0;
+      let marked = false;
+      this.slowMarked = false;
       for (;;) {
         let i = at;
         let byte = bytes[i];
@@ -91,8 +98,9 @@ export class Scanner {
           }
           let digits = i - first;
           let decimals = 0;
-          if (byte === 46) {
-            const point = ++i;
+          let point = -1;
+          if (byte === mark) {
+            point = ++i;
             byte = bytes[i];
             while ((byte ^ 48) < 10) {
               whole = (Math.imul(whole, 10) + (byte ^ 48)) | 0;
@@ -106,9 +114,12 @@ export class Scanner {
             if (digits <= SHORT) {
               value = decimals === 0 ? whole : whole / POWERS[decimals];
               if (negative) value = -value;
-            } else value = parseNumber(bytes, at, i);
+            } else value = parseNumber(bytes, at, i, mark);
             if (value - value !== 0 || (hasMarks && marks.has(value))) i = this.number(bytes, at, c, row);
-            else numbers[c][row] = value;
+            else {
+              numbers[c][row] = value;
+              if (point >= 0) marked = true;
+            }
           } else if (i === at && stops[byte] === 1) numbers[c][row] = NaN;
           else i = this.number(bytes, at, c, row);
         } else {
@@ -133,6 +144,7 @@ export class Scanner {
         if (byte === CR && bytes[at++] !== LF) return false;
         if (c < width && !this.endShort(bytes, start, i, c, row)) break;
         this.passBlanks();
+        if (marked || this.slowMarked) this.marked = true;
         this.lines[row] = this.line;
         this.rows = row + 1;
         break;
@@ -146,14 +158,14 @@ export class Scanner {
     if (!findCell(bytes, at, this.look.separator, this.span)) return -1;
     const { from, to, end } = this.span;
     if (this.wrong.has(c)) return end;
-    let value = from === to ? NaN : parseNumber(bytes, from, to);
+    let value = from === to ? NaN : parseNumber(bytes, from, to, this.look.decimals.mark);
     if (from < to && (value - value !== 0 || this.missing.numbers.has(value))) {
       const text = textIn(bytes, from, to)?.trim();
       if (text === undefined) return -1;
       if (this.missing.isMissing(text)) value = NaN;
       else {
-        const found = numberIn(text, "point");
-        if (found?.thousands) return -1; // whether they count hangs on the whole column
+        const found = readAs(text, this.look.decimals);
+        if (found === "unsure") return -1;
         value = found && Number.isFinite(found.value) ? found.value : NaN;
         if (value !== value) {
           this.odd[c].set(row, text);
@@ -162,6 +174,7 @@ export class Scanner {
       }
     }
     this.numbers[c][row] = value;
+    if (value === value && bytes.subarray(from, to).includes(this.look.decimals.mark)) this.slowMarked = true;
     return end;
   }
 
