@@ -74,8 +74,10 @@ function numberColumn(
   }
   if (marks.marked && !marks.agree) {
     // 1,234 beside 1234 may be two habits, so neither reading is safe for the marked cells.
-    for (const i of marked) values[i] = NaN;
-    bad.push(...marked);
+    for (const i of marked) {
+      values[i] = NaN;
+      bad.push(i);
+    }
     bad.sort((a, b) => a - b);
     if (!isMostly(bad.length, filled)) return null;
   }

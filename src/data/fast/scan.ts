@@ -230,7 +230,7 @@ export class Scanner {
   /** Blank lines count once a row follows. */
   private passBlanks(): void {
     if (this.blankSince.length === 0) return;
-    this.blank.push(...this.blankSince);
+    for (const line of this.blankSince) this.blank.push(line); // there may be more than one call can take
     this.blankSince = [];
   }
 
