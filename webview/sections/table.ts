@@ -50,7 +50,7 @@ function line(row: ShiftRow, { axis, heads, contrast }: ContrastBlock, report: (
     el(
       "th",
       { scope: "row", role: "rowheader", class: "held" },
-      el("span", { "data-cell": "held", title: row.held }, row.held),
+      el("span", { "data-cell": "held", title: row.held }, ...breakable(row.held)),
       row.place !== null && el("span", { class: "place" }, ` ${row.place}`),
     ),
     cell("rows", row.rows),
@@ -59,6 +59,11 @@ function line(row: ShiftRow, { axis, heads, contrast }: ContrastBlock, report: (
     cell("shift", ...figures(row.shift)),
     el("td", { role: "cell", class: "word" }, el("span", { "data-cell": "word" }, row.word), mark),
   );
+}
+
+/** A long name may break after an underscore before it breaks anywhere. */
+function breakable(text: string): (Node | string)[] {
+  return text.split(/(?<=_)/).flatMap((part, i) => (i === 0 ? [part] : [el("wbr", {}), part]));
 }
 
 /** "+340 (290, 390)" in two pieces that break only between them. */
