@@ -46,7 +46,7 @@ function sentences(question: QuestionState, choose: View["choose"]): HTMLElement
     kind === "amount"
       ? word("(per ", per, plan.exposure.unit ? ` ${plan.exposure.unit})` : ")")
       : levels.length > 0
-        ? word("(against ", against, ")")
+        ? word("(against ", el("span", { class: "tied" }, against, ")"))
         : null;
   const held = plan.covariates?.map(({ column }) => column) ?? [];
   const chips = held.map((column) =>

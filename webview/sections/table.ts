@@ -66,12 +66,19 @@ function breakable(text: string): (Node | string)[] {
   return text.split(/(?<=_)/).flatMap((part, i) => (i === 0 ? [part] : [el("wbr", {}), part]));
 }
 
-/** "+340 (290, 390)" in two pieces that break only between them. */
+/** "+340 (290, 390), difference in means only": the figure, its interval, and words; lines break only between them and in the words. */
 function figures(text: string): (Node | string)[] {
-  const [estimate, interval] = pieces(text);
-  return interval === ""
-    ? [el("span", { class: "estimate" }, text)]
-    : [el("span", { class: "estimate" }, estimate), " ", el("span", { class: "between" }, interval)];
+  const [estimate, rest] = pieces(text);
+  if (rest === "") return [el("span", { class: "estimate" }, text)];
+  const end = rest.indexOf(")") + 1;
+  const words = rest.slice(end).replace(/^(,?) /, "$1");
+  const comma = words.startsWith(",") ? "," : "";
+  return [
+    el("span", { class: "estimate" }, estimate),
+    " ",
+    el("span", { class: "between" }, rest.slice(0, end) + comma),
+    ...(words === "" ? [] : [" ", el("span", { class: "said" }, words.slice(comma.length))]),
+  ];
 }
 
 function pieces(text: string): [string, string] {
