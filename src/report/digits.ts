@@ -54,11 +54,13 @@ export function count(n: number): string {
   return grouped(String(n));
 }
 
-/** "12 %", "0.4 %", "< 0.1 %" of a share in [0, 1]. */
+/** "12 %", "0.4 %", "< 0.1 %", "> 99.9 %" of a share in [0, 1]: a part is never rounded to nothing or to the whole. */
 export function percent(share: number): string {
   const value = 100 * share;
   if (value > 0 && value < 0.1) return "< 0.1 %";
-  return `${value !== 0 && value < 1 ? value.toFixed(1) : value > 99 && value < 100 ? value.toFixed(1) : value.toFixed(0)} %`;
+  if (value > 99.9 && value < 100) return "> 99.9 %";
+  const atAnEnd = (value > 0 && value < 0.95) || (value >= 99.5 && value < 100);
+  return `${value.toFixed(atAnEnd ? 1 : 0)} %`;
 }
 
 /** "95 %", "99.9 %" of a level. */
@@ -68,7 +70,8 @@ export function levelName(level: number): string {
 
 /** "p = 0.012", "p < 0.001". */
 export function pValue(p: number): string {
-  return p < 0.001 ? "p < 0.001" : `p = ${p.toFixed(3)}`;
+  if (p < 0.001) return "p < 0.001";
+  return p > 0.9995 && p < 1 ? "p > 0.999" : `p = ${p.toFixed(3)}`;
 }
 
 function grouped(digits: string): string {

@@ -33,7 +33,7 @@ export function escapePlain(text: string): string {
   return text.replace(/[\u0000-\u001f\u007f-\u009f\u2028\u2029]+/g, " ");
 }
 
-/** A words cell that a spreadsheet would run as a formula gets an apostrophe before it; numbers of ours start with + or − and stay. */
+/** A cell of words that a spreadsheet would run as a formula gets an apostrophe before it. Not for our own figures, which start with +. */
 export function escapeFormula(text: string): string {
-  return /^[=@+\-\t\r]/.test(text) && !/^[+-][\d.]/.test(text) ? `'${text}` : text;
+  return /^\s*[=@+-]/.test(text) ? `'${text}` : text;
 }

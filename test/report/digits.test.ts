@@ -43,6 +43,10 @@ describe("numbers as people read them", () => {
     expect(percent(0.0004)).toBe("< 0.1 %");
     expect(percent(0.244)).toBe("24 %");
     expect(percent(0.9961)).toBe("99.6 %");
+    expect(percent(0.9996)).toBe("> 99.9 %");
+    expect(percent(0.00996)).toBe("1 %");
     expect(percent(1)).toBe("100 %");
+    expect(pValue(0.9996)).toBe("p > 0.999");
+    expect(pValue(1)).toBe("p = 1.000");
   });
 });

@@ -35,6 +35,7 @@ const CASES: Record<string, ReturnType<typeof sample>> = {
   heating: sample("heating"),
   seals: sample("seals"),
   glazing: sample("glazing"),
+  "valves randomised": sample("valves", { design: "randomised", sets: "each" }),
   swiss: openData("swiss", swiss),
   iris: openData("iris", iris),
   birthwt: openData("birthwt", birthwt),
@@ -49,6 +50,7 @@ describe("the text of each state is the reviewed one", () => {
       .split("\n=== ")
       .map((part) => [part.slice(0, part.indexOf("\n")).replace(/^=== /, ""), part.slice(part.indexOf("\n") + 1)]),
   );
+  it("none is stored that is not compared", () => expect([...stored.keys()].sort()).toEqual(Object.keys(CASES).sort()));
   for (const [name, { table, plan }] of Object.entries(CASES)) {
     it(name, () => {
       const { text } = outputsOf(compare(table, plan), plan);

@@ -9,6 +9,9 @@ import { outputsOf } from "./outputs";
 
 const NEVER = /\b(NaN|Infinity|undefined|null|\[object)/;
 const HOSTILE = [
+  "-2+3+cmd|' /C calc'!A0",
+  "+1",
+  " =cmd()",
   "<img src=x onerror=alert(1)>",
   "a|b",
   "`code`",
@@ -82,14 +85,15 @@ describe("hostile names show as text", () => {
       const table = tableOf({ y: x.map((v, i) => v + (i % 5)), g: x.map((_, i) => (i % 3 ? name : "other")), [name]: x });
       const outputs = outputsOf(compare(table, planOf("y", "g", [name])), planOf("y", "g", [name]));
       const markdown = outputs["markdown"];
-      const shown = name.replace(/\n/g, " ");
+      const shown = name.replace(/\n/g, " ").trim();
       expect(decoded(markdown)).toContain(shown);
       // nothing that HTML or Markdown acts on is left of it
       expect(markdown).not.toMatch(/<[a-z!/]|`|\*bold\*|\]\(|~~|\$x\$|www\.|\S@\S/i);
       for (const line of markdown.split("\n").filter((l) => l.startsWith("|"))) expect(line.split("|")).toHaveLength(7);
       expect(outputs["text"]).toContain(shown);
       for (const line of outputs["table"].split("\n").slice(0, -1)) expect(line.split("\t")).toHaveLength(6);
-      for (const value of outputs["table"].split(/[\t\n]/)) expect(value).not.toMatch(/^[=@]/);
+      for (const value of outputs["table"].split(/[\t\n]/)) expect(value).not.toMatch(/^\s*[=@-]/);
+      expect(outputs["csv"]).not.toMatch(/(^|[,\n]"?)\s*[=@+]|(^|[,\n]"?)\s*-(?![\d.]+(e[+-]?\d+)?([,\n]|$))/);
     });
   }
 });

@@ -5,7 +5,7 @@ import { everyOutput, openData, sample } from "./outputs";
 
 /** Whole numeric tokens of a text, signs and thousands marks off. */
 const tokens = (text: string): Set<string> =>
-  new Set((text.replaceAll(",", "").match(/\d+(?:\.\d+)?(?:e[+-]?\d+)?/g) ?? []).map((t) => t.replace(/\.0+$/, "")));
+  new Set((text.replaceAll(",", "").match(/\d+(?:\.\d+)?(?:e[+-]?\d+)?/g) ?? []).map((token) => String(Number(token))));
 
 /** The common-slope estimates that must not be printed: what the sets would say if slopes were never held to differ. */
 function hidden(table: Parameters<typeof compare>[0], plan: Plan, varying: readonly number[]): number[] {

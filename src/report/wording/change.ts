@@ -24,7 +24,9 @@ function meaning(voice: Voice, own: SingleReadout): string {
   const moved = withUnit(fixed(Math.abs(scale.show(own.estimate) - scale.show(own.estimate - shift.estimate)), decimals), scale);
   switch (own.change!) {
     case "steady":
-      return "adjusting hardly moves it";
+      return isTenth(own)
+        ? "adjusting hardly moves it"
+        : `adjusting moves it by ${moved}, less than the difference stated to matter`;
     case "unclear":
       return "whether adjusting moves it at all is unclear";
     case "reverses":
@@ -40,4 +42,10 @@ function meaning(voice: Voice, own: SingleReadout): string {
     case "grows":
       return `adjusting adds ${moved} to it`;
   }
+}
+
+/** Whether the shift is steady by the ten-percent rule, not by the stated margin alone. */
+function isTenth({ estimate, shift }: SingleReadout): boolean {
+  const tenth = 0.1 * Math.abs(estimate - shift!.estimate);
+  return shift!.interval !== null && shift!.interval.every((end) => Math.abs(end) <= tenth);
 }

@@ -29,7 +29,7 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
     case "none":
       return [
         {
-          text: `${held}, there is no ${comparison.question.kind === "groups" ? `difference${contrast.level === null ? "" : ` for ${word(contrast.level)}`}` : "slope"}: ${sayReason(readout.reason, plan)}.`,
+          text: `${held}, no ${comparison.question.kind === "groups" ? `difference${contrast.level === null ? "" : ` for ${word(contrast.level)}`}` : "slope"} can be given: ${sayReason(readout.reason, plan)}.`,
           tone: "headline",
         },
       ];
