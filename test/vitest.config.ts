@@ -5,6 +5,7 @@ export default defineConfig({
   test: {
     root: new URL("..", import.meta.url).pathname,
     include: ["test/{engine,data,plan,report,reference,house,cli,host}/**/*.test.ts"],
+    setupFiles: ["test/setup.ts"],
     testTimeout: 60_000,
     maxWorkers: 2,
   },

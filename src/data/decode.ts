@@ -20,6 +20,8 @@ export function decode(bytes: Uint8Array): Decoded {
     const line = encoding === "utf-8" ? firstBadLine(bytes) : firstBadUnit(bytes, encoding === "utf-16le" ? 1 : 0);
     return { ok: false, problem: { code: "bad-encoding", line } };
   }
+  // A second mark is a blank to everything behind; papaparse would take it off and put the lines out by one.
+  while (text.startsWith("\ufeff")) text = text.slice(1);
   if (text.includes("\r")) text = text.replace(/\r\n?/g, "\n");
   const zero = text.indexOf("\0");
   if (zero >= 0) return { ok: false, problem: { code: "bad-encoding", line: text.slice(0, zero).split("\n").length } };

@@ -15,6 +15,7 @@ export const CORPUS: Record<string, Expected> = {
   // — encodings —
   "utf8.csv": flats,
   "utf8-bom.csv": flats,
+  "two-marks.csv": plain,
   "utf16le-bom.csv": flats,
   "utf16be-bom.csv": flats,
   "utf16le.csv": flats,
