@@ -1,6 +1,7 @@
 import type { Plan } from "./engine/plan";
 import type { PlanChange } from "./plan/change";
 import type { Presentation } from "./report/presentation";
+import type { SlopesChoice, SlopesSection } from "./report/slopes/presentation";
 
 /**
  * The typed messages between the extension host and the panel's page: the only file both sides import.
@@ -20,9 +21,11 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   | { readonly type: "openLine"; readonly line: number; /** The line is one of the plan file. */ readonly inPlan?: boolean }
   /** Actions named on a status: choose another file, read again. */
   | { readonly type: "readAgain" }
+  /** What the Slopes section shows; null when it was closed. */
+  | { readonly type: "slopes"; readonly choice: SlopesChoice | null }
 );
 
-export type { PlanChange };
+export type { PlanChange, SlopesChoice, SlopesSection };
 
 /** Sets that hold all of `holds` and none of `omits`; null asks for no extra rows. */
 export type SetFilter = { readonly holds: readonly string[]; readonly omits: readonly string[] } | null;
@@ -49,6 +52,11 @@ export interface PanelState {
   readonly checking: boolean;
   readonly reading: Reading | null;
   readonly filter: SetFilter;
+  /**
+   * The open Slopes section, always of the comparison in `presentation`: null while it is closed, and for the moment between a new result and
+   * its figure.
+   */
+  readonly slopes: SlopesSection | null;
 }
 
 export type Status =

@@ -1,13 +1,14 @@
 import { applyChange } from "../plan/change";
 import type { PanelState, PlanChange, QuestionState, Reading, SetFilter } from "../protocol";
 import type { Presentation } from "../report/presentation";
+import { askOf } from "./ask";
 import { settlesGuess } from "./choose";
 import { GRACE_MS } from "./quiet";
 import type { Chosen, PlanText, SessionParts } from "./sessionParts";
 import { statusOf } from "./status";
 import type { Trouble } from "./status";
 import type { Run } from "./worker/client";
-import type { Ask, Compared, Outcome, Stamp } from "./worker/messages";
+import type { Compared, Outcome, Stamp } from "./worker/messages";
 import { sameStamp, stampIn } from "./worker/stamp";
 
 /** Progress is worth showing after this long. */
@@ -65,6 +66,7 @@ export class Session {
       checking: this.checking,
       reading: this.reading,
       filter: this.filter,
+      slopes: null,
     };
   }
 
@@ -169,8 +171,8 @@ export class Session {
   /** @param reread false lets the worker use the columns it has, if they are those of the file as it stands */
   private start(reread: boolean, opened: Promise<void> = Promise.resolve()): void {
     this.stop();
-    const { compute, csv, followed, target } = this.parts;
-    const { filter } = this;
+    const { filter, parts } = this;
+    const { compute, csv, followed, target } = parts;
     const again = reread || this.lastStamp === null || !followed.stands(this.lastStamp);
     this.runStarted = Date.now();
     this.share = null;
@@ -178,8 +180,9 @@ export class Session {
       if (this.run === run) then();
     };
     const known = this.shown?.sha256 ?? null;
+    const ask = askOf(this.chosen, this.planText, this.fresh);
     const run: Run = compute.compare(
-      { session: target, path: csv.path, file: csv.file, ask: this.ask(), filter, reread: again, known },
+      { session: target, path: csv.path, file: csv.file, ask, filter, reread: again, known },
       {
         progress: (share) =>
           live(() => {
@@ -277,12 +280,6 @@ export class Session {
     this.shown = null;
     this.checking = false;
     this.parts.changed();
-  }
-
-  private ask(): Ask {
-    // a guess, or a question remembered from another day, gives way where it no longer fits the file
-    if (this.chosen) return { kind: "plan", ...this.chosen, orSuggest: !this.planText && (this.fresh || this.chosen.guessed) };
-    return this.planText ? { kind: "text", ...this.planText } : { kind: "suggest" };
   }
 
   private stop(): void {

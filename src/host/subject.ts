@@ -170,7 +170,7 @@ export class Subject {
 
   private blank(): PanelState {
     const { path, target } = this.parts;
-    const nothing = { question: null, presentation: null, checking: false, reading: null, filter: null };
+    const nothing = { question: null, presentation: null, checking: false, reading: null, filter: null, slopes: null };
     return { file: basename(path), target, status: { kind: "reading" }, ...nothing };
   }
 }

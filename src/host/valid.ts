@@ -21,6 +21,9 @@ const CHANGES: Readonly<Record<string, Check>> = {
   report: (change) => texts(change["columns"]),
 };
 
+const orNull = (check: (value: unknown) => boolean) => (value: unknown) => value === null || check(value);
+const place = (value: unknown) => Number.isInteger(value) && (value as number) >= 0;
+
 const MESSAGES: Readonly<Record<PageMessage["type"], Check>> = {
   ready: () => true,
   choose: ({ change }) =>
@@ -32,6 +35,9 @@ const MESSAGES: Readonly<Record<PageMessage["type"], Check>> = {
   copy: ({ id, as }) => finite(id) && (as === "markdown" || as === "table"),
   openLine: (message) => line(message["line"]) && (message["inPlan"] === undefined || typeof message["inPlan"] === "boolean"),
   readAgain: () => true,
+  slopes: ({ choice }) =>
+    choice === null ||
+    (fields(choice) && orNull(place)(choice["set"]) && orNull(text)(choice["modifier"]) && orNull(place)(choice["contrast"])),
 };
 
 /** A message is data from a page: believed only when it has the protocol's version and shape. */

@@ -11,6 +11,7 @@ import { stripOf } from "./strip";
 import { sayErrors, sayJoint, sayOwnRows, sayRows } from "./wording/facts";
 import { sayFinding } from "./wording/finding";
 import { sayReadout } from "./wording/readout";
+import { saySlopesSummary } from "./wording/slopesSection";
 
 /** Up to this many sets are a table; more become a strip with the telling ones as rows. */
 export const TABLE_SETS = 12;
@@ -59,6 +60,7 @@ export function present(
       `SHA-256 ${comparison.source.sha256.slice(0, 12)}`,
     ],
     summary: headline[0]?.text ?? "",
+    slopesSummary: saySlopesSummary(comparison, plan, checking),
   };
 }
 

@@ -21,6 +21,8 @@ export interface Presentation {
   readonly provenance: readonly string[];
   /** One line for a status bar or a screen reader: headline without caveats. */
   readonly summary: string;
+  /** One line on the slopes of the reported set, e.g. "slopes differ in floor_m2 for the reported set". */
+  readonly slopesSummary: string;
 }
 
 export interface Note {

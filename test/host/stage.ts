@@ -26,6 +26,7 @@ export const presentation = (title: string): Presentation => ({
   rows: "",
   provenance: [],
   summary: title,
+  slopesSummary: "",
 });
 export const question = (asked: Plan, guessed: boolean): QuestionState => ({
   plan: asked,

@@ -12,6 +12,9 @@ describe("messages from the page", () => {
       { type: "copy", id: 4, as: "markdown" },
       { type: "copy", id: 4, as: "table" },
       { type: "filter", filter: null },
+      { type: "slopes", choice: null },
+      { type: "slopes", choice: { set: null, modifier: null, contrast: null } },
+      { type: "slopes", choice: { set: 3, modifier: "floor_m2", contrast: 0 } },
       { type: "filter", filter: { holds: ["a"], omits: [] } },
       ...[
         { key: "outcome", column: "a" },
@@ -42,16 +45,19 @@ describe("messages from the page", () => {
       { v: 1, type: "choose", change: { key: "constructor" } },
       { v: 1, type: "choose", change: { key: "covariates", columns: [1] } },
       { v: 1, type: "filter", filter: { holds: "a", omits: [] } },
+      { v: 1, type: "slopes" },
+      { v: 1, type: "slopes", choice: { set: -1, modifier: null, contrast: null } },
+      { v: 1, type: "slopes", choice: { set: 0, modifier: 7, contrast: null } },
+      { v: 1, type: "slopes", choice: { set: 0, modifier: null } },
     ];
     expect(wrong.filter(isPageMessage)).toEqual([]);
   });
   test("nothing a page can send makes the check throw", () => {
     fc.assert(
-      fc.property(fc.anything(), fc.constantFrom("choose", "copy", "filter", "openLine"), (value, type) => {
+      fc.property(fc.anything(), fc.constantFrom("choose", "copy", "filter", "openLine", "slopes"), (value, type) => {
+        const message = { v: 1, type, change: value, filter: value, line: value, id: value, as: value, choice: value };
         expect(typeof isPageMessage(value)).toBe("boolean");
-        expect(typeof isPageMessage({ v: 1, type, change: value, filter: value, line: value, id: value, as: value })).toBe(
-          "boolean",
-        );
+        expect(typeof isPageMessage(message)).toBe("boolean");
       }),
     );
   });

@@ -67,6 +67,7 @@ export function panel(more = {}, shown = {}, asked = {}) {
     status: { kind: "ready" },
     checking: false,
     filter: null,
+    slopes: null,
     reading: { number: 7, at: new Date(Date.now() - 12_000).toISOString() },
     question: {
       plan,
@@ -108,6 +109,7 @@ export function panel(more = {}, shown = {}, asked = {}) {
       rows: "1,187 of 1,204 rows were used; left out: 17 without kwh.",
       provenance: ["HC3 standard errors"],
       summary: "Holding floor_m2 and tenure fixed, 212 kWh lower.",
+      slopesSummary: "not shown to differ or agree for the reported set",
       ...shown,
     },
     ...more,

@@ -6,7 +6,16 @@ export interface SlopesSection {
   /** What is looked at, and what else could be. */
   readonly sets: readonly { readonly index: number; readonly label: string }[];
   readonly set: number;
-  readonly modifiers: readonly { readonly name: string; /** The verdict in words. */ readonly word: string }[];
+  /** Modifiers that can be looked at; empty where none was tested (an amount still has its added-variable plot then). */
+  readonly modifiers: readonly {
+    /** The column: what a choice names. */
+    readonly name: string;
+    /** What a person reads. */
+    readonly label: string;
+    /** The verdict in words. */
+    readonly word: string;
+  }[];
+  /** The column looked at; "" where there is none. */
   readonly modifier: string;
   /** Contrasts to choose from; one for two groups or an amount. */
   readonly contrasts: readonly string[];
