@@ -2,6 +2,7 @@ import { stopIf } from "./cancelled";
 import type { Comparison, SetResult } from "./comparison";
 import { buildDesign, countGroups } from "./design/build";
 import type { Design } from "./design/types";
+import type { Passing } from "./errors/many";
 import type { Finding, Reason } from "./findings";
 import { finiteComparison } from "./finite";
 import { factorise } from "./linear/factorise";
@@ -13,9 +14,10 @@ import type { Resolved } from "./question/resolve";
 import { findingsOf } from "./readout/findings";
 import { emptyResult } from "./readout/empty";
 import { ownEstimates } from "./readout/own";
+import { withErrors } from "./readout/errors";
 import { setResult } from "./readout/result";
 import type { Judged } from "./readout/result";
-import { fitSet } from "./readout/set";
+import { solveSet } from "./readout/set";
 import type { Depth } from "./readout/set";
 import { findRows } from "./rows/common";
 import type { Rows } from "./rows/common";
@@ -57,13 +59,13 @@ export function compare(table: Table, plan: Plan, { cancelled, preview }: Compar
     return finish(
       head,
       null,
-      resolved.sets.map((set, i) => emptyResult(resolved, set, rows.own(i).length, nothing)),
+      resolved.sets.map((set, i) => emptyResult(resolved, set, rows.ownCount(i), nothing)),
       [],
     );
   const { modifiers } = resolved.question;
   const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers);
   const factor = factorise(design.frame, cancelled);
-  const work = { table, resolved, rows, design, factor, cancelled };
+  const work = { table, resolved, rows, design, factor, passing: { cancelled } };
   if (preview && isLong(resolved, rows))
     preview(finish({ ...head, resolved: asClassical(resolved) }, design, firstLook(work), []));
   const judged = judgeAll(work, resolved.question.variance, depthOf(resolved, rows));
@@ -76,7 +78,7 @@ interface Work {
   readonly rows: Rows;
   readonly design: Design;
   readonly factor: Factor;
-  readonly cancelled?: () => boolean;
+  readonly passing: Passing;
 }
 
 /** Whether the plan's errors take long enough for a first look to be worth showing. */
@@ -103,24 +105,42 @@ function firstLook(work: Work): SetResult[] {
   );
 }
 
-function judgeAll({ resolved, design, factor, cancelled }: Work, variance: Variance, depth: (set: number) => Depth): Judged[] {
-  return resolved.sets.map((_, i) => {
-    stopIf(cancelled);
-    return judge(resolved, design, factor, i, variance, depth(i));
+function judgeAll({ resolved, design, factor, passing }: Work, variance: Variance, depth: (set: number) => Depth): Judged[] {
+  const { level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
+  const solved = resolved.sets.map((columns, i) => {
+    stopIf(passing.cancelled);
+    return solveSet(design, factor, columns, variance, depth(i));
   });
+  const sets = withErrors(design, factor, solved, variance, depth, passing);
+  const slopes = readSlopes(
+    {
+      design,
+      factor,
+      modifiers,
+      variance,
+      level,
+      alpha: slopesAlpha,
+      margin,
+      reportAt: resolved.reportAt,
+      outcomeForm,
+      average: resolved.average,
+      passing,
+    },
+    sets.map(({ columns, reasons }, index) => ({ columns, index, estimable: reasons.includes(null) })),
+  );
+  return sets.map((set, i) => ({ set, slopes: slopes[i] }));
 }
 
 function resultsOf(
-  { resolved, rows, design, factor, cancelled }: Work,
+  { resolved, rows, design, factor, passing }: Work,
   judged: readonly Judged[],
   depth: (set: number) => Depth,
 ): SetResult[] {
   const small = rows.common.length * judged.length <= OWN_ROWS;
   return judged.map((own, i) => {
-    stopIf(cancelled);
-    const ownRows = rows.own(i);
-    const wanted =
-      depth(i) !== "first look" && ownRows.length !== rows.common.length && (small || i === 0 || i === resolved.reported);
+    stopIf(passing.cancelled);
+    const ownRows = rows.ownCount(i);
+    const wanted = depth(i) !== "first look" && ownRows !== rows.common.length && (small || i === 0 || i === resolved.reported);
     return setResult({
       resolved,
       design,
@@ -128,33 +148,11 @@ function resultsOf(
       base: judged[0],
       judged: own,
       isBase: i === 0,
-      ownRows: ownRows.length,
-      ownEstimates: wanted ? ownEstimates(resolved, ownRows, resolved.sets[i]) : null,
+      ownRows,
+      ownEstimates: wanted ? ownEstimates(resolved, rows.own(i), resolved.sets[i]) : null,
       depth: depth(i),
     });
   });
-}
-
-function judge(resolved: Resolved, design: Design, factor: Factor, i: number, variance: Variance, depth: Depth): Judged {
-  const { level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
-  const set = fitSet(design, factor, resolved.sets[i], variance, depth);
-  const estimable = set.reasons.some((reason) => reason === null);
-  const slopes = readSlopes({
-    design,
-    factor,
-    start: set.cov && { fit: set.fit, cov: set.cov },
-    set: resolved.sets[i],
-    setIndex: i,
-    modifiers: estimable ? modifiers : [],
-    variance,
-    level,
-    alpha: slopesAlpha,
-    margin,
-    reportAt: resolved.reportAt,
-    outcomeForm,
-    average: resolved.average,
-  });
-  return { set, slopes };
 }
 
 /** Why no set has a number at all. */

@@ -1,7 +1,7 @@
 import { buildDesign } from "../design/build";
 import { factorise } from "../linear/factorise";
 import type { Resolved } from "../question/resolve";
-import { fitSet } from "./set";
+import { solveSet } from "./set";
 
 /**
  * Each contrast's estimate on a set's own rows (METHODS 1), null where it has none: what the common rows' estimate is less this is due to the
@@ -9,7 +9,7 @@ import { fitSet } from "./set";
  */
 export function ownEstimates(resolved: Resolved, rows: Int32Array, set: readonly string[]): (number | null)[] {
   const design = buildDesign(resolved, rows, set, []);
-  const { fit, reasons } = fitSet(design, factorise(design.frame), set, "classical", "first look");
+  const { fit, reasons } = solveSet(design, factorise(design.frame), set, "classical", "first look");
   return design.contrasts.map(({ column, factor }, i) =>
     reasons[i] ? null : fit.coefficients[fit.columns.indexOf(column)] * factor,
   );

@@ -82,6 +82,7 @@ function readoutOf(input: ResultInput, i: number): Readout {
     level,
     df: own.df,
     withParts: input.depth === "full",
+    squares: set.shiftSquares && set.shiftSquares[design.exposure.columns.indexOf(contrast.column)] * contrast.factor ** 2,
   });
   const change = changeWord(estimateOf(base.set, contrast, level), own, shift.interval, marginBounds(margin, outcomeForm));
   return { kind, ...own, shift, change };

@@ -1,12 +1,10 @@
 import type { SetResult } from "../comparison";
 import type { ContrastColumn, Design } from "../design/types";
-import { covariance } from "../errors/covariance";
-import { lightErrors } from "../errors/light";
 import type { Covariance } from "../errors/types";
 import type { Reason } from "../findings";
 import { fitColumns } from "../linear/fit";
 import { refine } from "../linear/refine";
-import type { Factor, Fit, Frame } from "../linear/types";
+import type { Factor, Fit } from "../linear/types";
 import type { Variance } from "../plan";
 
 /**
@@ -15,22 +13,36 @@ import type { Variance } from "../plan";
  */
 export type Depth = "full" | "exposure" | "first look";
 
-/** One set, fitted. */
-export interface SetFit {
+/** One set, fitted, still without errors. */
+export interface SolvedSet {
   readonly columns: readonly string[];
   readonly fit: Fit;
-  /** Null where there are no residual degrees of freedom, or one cluster. */
-  readonly cov: Covariance | null;
+  /** False where there are no residual degrees of freedom, or one cluster: no errors then. */
+  readonly enough: boolean;
   /** Covariate columns set aside, by covariate name, with the covariates they are a combination of. */
   readonly setAside: SetResult["setAside"];
   /** Why a contrast has no number, aligned with design.contrasts; null where it has. */
   readonly reasons: readonly (Reason | null)[];
 }
 
+/** One set, fitted. */
+export interface SetFit extends SolvedSet {
+  /** Null where there can be none. */
+  readonly cov: Covariance | null;
+  /** By exposure column, the square of the shift's error per unit of the column, where it was found together with the errors; else null. */
+  readonly shiftSquares: Float64Array | null;
+}
+
 /**
  * Fits a set: constant, its covariates, the exposure last, so that it is the exposure that falls to a dependence with them.
  */
-export function fitSet(design: Design, factor: Factor, columns: readonly string[], variance: Variance, depth: Depth): SetFit {
+export function solveSet(
+  design: Design,
+  factor: Factor,
+  columns: readonly string[],
+  variance: Variance,
+  depth: Depth,
+): SolvedSet {
   const { frame, contrasts } = design;
   const exposure = contrasts.map((c) => c.column).filter((c) => c >= 0);
   const before = columns.flatMap((name) => design.covariates.get(name)!.columns);
@@ -48,23 +60,13 @@ export function fitSet(design: Design, factor: Factor, columns: readonly string[
   return {
     columns,
     fit,
-    cov: enough ? errorsOf(frame, fit, variance, depth, exposure) : null,
+    enough,
     setAside: mergeAside(
       aside.map(({ column, combinationOf }) => ({ column: owner(column), combinationOf: unique(combinationOf.map(owner)) })),
       new Set(first.columns.map(owner)),
     ),
     reasons: contrasts.map((contrast) => tooFew ?? reasonFor(design, contrast, fit, owner)),
   };
-}
-
-function errorsOf(frame: Frame, fit: Fit, variance: Variance, depth: Depth, exposure: readonly number[]): Covariance {
-  if (depth === "first look") return lightErrors(fit);
-  return covariance(frame, fit, variance, depth === "exposure" ? firstExposure(fit.columns, exposure) : 0);
-}
-
-function firstExposure(columns: readonly number[], exposure: readonly number[]): number {
-  const at = columns.findIndex((c) => exposure.includes(c));
-  return at < 0 ? 0 : at;
 }
 
 function reasonFor(design: Design, contrast: ContrastColumn, fit: Fit, owner: (column: number) => string): Reason | null {

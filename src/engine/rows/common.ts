@@ -11,9 +11,14 @@ export interface Rows {
   readonly common: Int32Array;
   /** For each set, the rows complete for that set alone (and kept, with weight above 0). */
   readonly own: (set: number) => Int32Array;
+  /** How many these are, without listing them. */
+  readonly ownCount: (set: number) => number;
   readonly count: RowCount;
   readonly findings: readonly Finding[];
 }
+
+/** Sets 1 for each row that a condition costs; one entry a table row. */
+type Condition = (lost: Uint8Array) => void;
 
 /**
  * Rows complete in outcome, exposure, weights, cluster, every covariate of every set and every modifier (METHODS 1); each lost row is counted
@@ -21,54 +26,133 @@ export interface Rows {
  */
 export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
   const n = table.rows;
-  const lost = new Map<string, number>();
-  const usable = new Uint8Array(n).fill(1);
+  const losses = new Losses(n);
   const kept = new Uint8Array(n).fill(1);
-  // A column may stand in several places (kept by and held fixed, say); a row is lost to it once.
-  const losses = new Map<string, ((i: number) => boolean)[]>();
-  const lose = (column: string, gone: (i: number) => boolean) => losses.set(column, [...(losses.get(column) ?? []), gone]);
   for (const rule of plan.keep ?? []) {
     const out = fails(table, rule);
-    lose(rule.column, out);
-    for (let i = 0; i < n; i++) if (out(i)) kept[i] = 0;
+    losses.add(rule.column, (lost) => {
+      for (let i = 0; i < n; i++) {
+        if (!out(i)) continue;
+        lost[i] = 1;
+        kept[i] = 0;
+      }
+    });
   }
-  const { outcome, exposure, weights, cluster, sources } = resolved;
-  const needed: [string, (i: number) => boolean][] = [
-    [resolved.question.outcome, (i) => Number.isNaN(outcome[i])],
-    [exposure.column, exposure.kind === "amount" ? (i) => Number.isNaN(exposure.values[i]) : (i) => exposure.groups.codes[i] < 0],
-  ];
-  if (weights) needed.push([resolved.question.weights!, (i) => !(weights[i] > 0)]);
-  if (cluster) needed.push([resolved.question.cluster!, (i) => cluster.codes[i] < 0]);
-  for (const [column, gone] of needed) lose(column, gone);
-  for (const [column, source] of sources) lose(column, missingIn(source));
-  for (const [column, tests] of losses) {
-    let count = 0;
-    for (let i = 0; i < n; i++) {
-      if (!tests.some((gone) => gone(i))) continue;
-      usable[i] = 0;
-      count++;
-    }
-    if (count > 0) lost.set(column, count);
-  }
-  const common = indexes(n, (i) => usable[i] === 1);
+  for (const [column, condition] of neededOf(resolved)) losses.add(column, condition);
+  const whole = losses.rows();
+  const { sources } = resolved;
+  for (const [column, source] of sources) losses.add(column, missingIn(source));
+  const complete = losses.rows();
+  const common = indexes(n, (i) => complete[i] === 0);
+  const { pattern, patterns } = patternsOf(n, whole, sources);
+  const takes = (set: number) => patterns.map(({ missing }) => resolved.sets[set].every((column) => !missing.has(column)));
   const own = (set: number): Int32Array => {
-    // No modifier or covariate beyond the set's own has cost a row: the common rows are the set's own.
-    const others = [...sources.keys()].filter((column) => !resolved.sets[set].includes(column));
-    if (others.every((column) => !lost.has(column))) return common;
-    const tests = [...needed.map(([, gone]) => gone), ...resolved.sets[set].map((column) => missingIn(sources.get(column)!))];
-    return indexes(n, (i) => kept[i] === 1 && tests.every((gone) => !gone(i)));
+    const taken = takes(set);
+    // no modifier or covariate beyond the set's own has cost a row: the common rows are the set's own
+    if (ownCount(set) === common.length) return common;
+    return indexes(n, (i) => pattern[i] >= 0 && taken[pattern[i]]);
   };
-  const droppedBy = [...lost].map(([column, rows]) => ({ column, rows }));
+  const ownCount = (set: number): number => {
+    const taken = takes(set);
+    return patterns.reduce((sum, { rows }, i) => sum + (taken[i] ? rows : 0), 0);
+  };
   const keptRows = kept.reduce((sum, k) => sum + k, 0);
   const findings: Finding[] = plan.keep?.length
     ? [{ code: "kept-rows", rows: keptRows, columns: [...new Set(plan.keep.map((k) => k.column))] }]
     : [];
-  return { common, own, count: { read: n, common: common.length, droppedBy }, findings };
+  return { common, own, ownCount, count: { read: n, common: common.length, droppedBy: losses.byColumn() }, findings };
 }
 
-export function missingIn(source: Source): (i: number) => boolean {
-  if (source.kind === "category") return (i) => source.groups.codes[i] < 0;
-  return (i) => Number.isNaN(source.values[i]);
+/** Rows lost, under each column once, however many places name it. */
+class Losses {
+  private readonly lost = new Map<string, Uint8Array>();
+
+  constructor(private readonly n: number) {}
+
+  add(column: string, condition: Condition): void {
+    let lost = this.lost.get(column);
+    if (!lost) this.lost.set(column, (lost = new Uint8Array(this.n)));
+    condition(lost);
+  }
+
+  /** 1 for each row lost to any column so far. */
+  rows(): Uint8Array {
+    const all = new Uint8Array(this.n);
+    for (const lost of this.lost.values()) for (let i = 0; i < all.length; i++) all[i] |= lost[i];
+    return all;
+  }
+
+  byColumn(): RowCount["droppedBy"] {
+    return [...this.lost].flatMap(([column, lost]) => {
+      let rows = 0;
+      for (let i = 0; i < lost.length; i++) rows += lost[i];
+      return rows > 0 ? [{ column, rows }] : [];
+    });
+  }
+}
+
+/** What every set needs, by column. */
+function neededOf({ question, outcome, exposure, weights, cluster }: Resolved): [string, Condition][] {
+  const needed: [string, Condition][] = [
+    [question.outcome, notANumber(outcome)],
+    [exposure.column, exposure.kind === "amount" ? notANumber(exposure.values) : noLevel(exposure.groups.codes)],
+  ];
+  if (weights) {
+    needed.push([
+      question.weights!,
+      (lost) => {
+        for (let i = 0; i < lost.length; i++) if (!(weights[i] > 0)) lost[i] = 1;
+      },
+    ]);
+  }
+  if (cluster) needed.push([question.cluster!, noLevel(cluster.codes)]);
+  return needed;
+}
+
+function missingIn(source: Source): Condition {
+  return source.kind === "category" ? noLevel(source.groups.codes) : notANumber(source.values);
+}
+
+function notANumber(values: Float64Array): Condition {
+  return (lost) => {
+    for (let i = 0; i < lost.length; i++) if (values[i] !== values[i]) lost[i] = 1;
+  };
+}
+
+function noLevel(codes: Int32Array): Condition {
+  return (lost) => {
+    for (let i = 0; i < lost.length; i++) if (codes[i] < 0) lost[i] = 1;
+  };
+}
+
+/**
+ * Rows put together by which covariates and modifiers they miss: there are few such patterns, so that a set's own rows are counted without
+ * looking at the rows again.
+ * @param lost 1 for rows that no set can use; their pattern is −1
+ */
+function patternsOf(
+  n: number,
+  lost: Uint8Array,
+  sources: Resolved["sources"],
+): { pattern: Int32Array; patterns: { missing: Set<string>; rows: number }[] } {
+  const pattern = Int32Array.from(lost, (gone) => -gone);
+  const patterns = [{ missing: new Set<string>(), rows: 0 }];
+  const mark = new Uint8Array(n);
+  for (const [column, source] of sources) {
+    missingIn(source)(mark.fill(0));
+    const split = new Map<number, number>();
+    for (let i = 0; i < n; i++) {
+      if (mark[i] === 0 || pattern[i] < 0) continue;
+      let to = split.get(pattern[i]);
+      if (to === undefined) {
+        to = patterns.push({ missing: new Set([...patterns[pattern[i]].missing, column]), rows: 0 }) - 1;
+        split.set(pattern[i], to);
+      }
+      pattern[i] = to;
+    }
+  }
+  for (let i = 0; i < n; i++) if (pattern[i] >= 0) patterns[pattern[i]].rows++;
+  return { pattern, patterns };
 }
 
 /** Whether a row fails one condition of `keep`; a missing cell fails it. */

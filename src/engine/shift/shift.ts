@@ -20,21 +20,19 @@ export interface ShiftInput {
   /** Degrees of freedom of the adjusted estimate; null where it has none. */
   readonly df: number | null;
   readonly withParts: boolean;
+  /** Σ (influence − base influence)² where it is known already; null: found here, from both fits' rows. */
+  readonly squares: number | null;
 }
 
 /**
  * Adjusted less base estimate on the same rows, with an interval from the two fits' paired influences (METHODS 4): rows that push both
  * estimates alike do not widen it.
  */
-export function shiftOf({ design, factor, base, full, contrast, names, level, df, withParts }: ShiftInput): Shift {
+export function shiftOf({ design, factor, base, full, contrast, names, level, df, withParts, squares }: ShiftInput): Shift {
   const value = (fitted: Fitted) => fitted.fit.coefficients[fitted.fit.columns.indexOf(contrast.column)] * contrast.factor;
   const estimate = value(full) - value(base);
-  const psi = contrastInfluence(design, full, contrast);
-  const psiBase = baseInfluence(design, base, contrast);
   const errorFactor = full.cov.kind === "CR1" ? clusterFactor(design.frame, full.fit) : 1;
-  let sum = 0;
-  for (let i = 0; i < psi.length; i++) sum += (psi[i] - psiBase[i]) ** 2;
-  const error = Math.sqrt(sum * errorFactor);
+  const error = Math.sqrt((squares ?? pairedSquares(design, base, full, contrast)) * errorFactor);
   const standardError = Number.isFinite(error) ? error : null;
   const half = standardError === null || df === null ? null : standardError === 0 ? 0 : tCritical(level, df) * standardError;
   return {
@@ -43,6 +41,14 @@ export function shiftOf({ design, factor, base, full, contrast, names, level, df
     interval: half === null ? null : [estimate - half, estimate + half],
     parts: withParts ? shiftParts(design, factor, base, full, contrast, names, errorFactor) : [],
   };
+}
+
+function pairedSquares(design: Design, base: Fitted, full: Fitted, contrast: ContrastColumn): number {
+  const psi = contrastInfluence(design, full, contrast);
+  const psiBase = baseInfluence(design, base, contrast);
+  let sum = 0;
+  for (let i = 0; i < psi.length; i++) sum += (psi[i] - psiBase[i]) ** 2;
+  return sum;
 }
 
 function contrastInfluence(design: Design, { fit, cov }: Fitted, contrast: ContrastColumn): Float64Array {

@@ -1,12 +1,11 @@
 import type { ContrastColumn, Design } from "../design/types";
-import { addedErrors } from "../errors/added";
-import { covariance } from "../errors/covariance";
-import type { Scratch } from "../errors/covariance";
+import { manyErrors } from "../errors/many";
 import { quadratic } from "../errors/quadratic";
 import { fitColumns } from "../linear/fit";
+import type { CoefficientErrors } from "../errors/types";
 import type { Fit } from "../linear/types";
 import { tCritical } from "../probability";
-import type { InteractionFit, SlopesInput } from "./types";
+import type { InteractionFit, SlopesQuestion } from "./types";
 
 /** A combination of coefficients with its error. `standardError` and `df` are null where they cannot be computed. */
 export interface Combined {
@@ -15,36 +14,44 @@ export interface Combined {
   readonly df: number | null;
 }
 
-/**
- * The set, one modifier and the exposure's products with it, for testing: errors for the products alone, carried on from the set's own fit
- * where the kind of errors allows.
- */
-export function fitTrial(input: SlopesInput, modifier: string): InteractionFit {
-  const { design, factor, set, start, variance } = input;
+/** The set, one modifier and the exposure's products with it, for testing: without errors yet. */
+export function solveTrial({ design, factor }: SlopesQuestion, set: readonly string[], modifier: string): Fit {
   const extra = set.includes(modifier) ? [] : design.covariates.get(modifier)!.columns;
-  const products = design.interactions.get(modifier)!.columns.flat();
-  const fit = fitColumns(factor, [0, ...columnsOf(design, set), ...exposureColumns(design), ...extra, ...products]);
-  const modifiers = [modifier];
-  if (!hasErrors(input, fit)) return { fit, cov: null, modifiers };
-  const from = fit.columns.findIndex((c) => products.includes(c));
-  const added = start && addedErrors(design.frame, start, fit, variance, from);
-  if (added) return { fit, cov: added, modifiers };
-  return { fit, cov: from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null, modifiers };
+  return fitColumns(factor, [
+    0,
+    ...columnsOf(design, set),
+    ...exposureColumns(design),
+    ...extra,
+    ...productsOf(design, [modifier]),
+  ]);
 }
 
-/** The set, the modifiers and the exposure's products with them, for readouts: errors for the exposure's columns and the products. */
-export function fitInteraction(input: SlopesInput, modifiers: readonly string[]): InteractionFit {
-  const { design, factor, set, variance } = input;
-  const products = modifiers.flatMap((name) => design.interactions.get(name)!.columns.flat());
-  const exposure = exposureColumns(design);
-  const fit = fitColumns(factor, [0, ...columnsOf(design, [...new Set([...set, ...modifiers])]), ...exposure, ...products]);
-  const from = fit.columns.findIndex((c) => exposure.includes(c) || products.includes(c));
-  const cov = hasErrors(input, fit) && from >= 0 ? covariance(design.frame, fit, variance, from, scratchFor(design)) : null;
-  return { fit, cov, modifiers };
+/** A set, some modifiers and the exposure's products with them, for readouts: errors for the exposure's columns and the products. */
+export function fitInteractions(
+  question: SlopesQuestion,
+  sets: readonly (readonly string[])[],
+  modifiers: readonly string[],
+): InteractionFit[] {
+  const { design, factor } = question;
+  const targets = [...exposureColumns(design), ...productsOf(design, modifiers)];
+  const fits = sets.map((set) => fitColumns(factor, [0, ...columnsOf(design, [...new Set([...set, ...modifiers])]), ...targets]));
+  return errorsFor(question, fits, targets).map((cov, i) => ({ fit: fits[i], cov, modifiers }));
 }
 
-function hasErrors({ design, variance }: SlopesInput, fit: Fit): boolean {
-  return fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1);
+/** Errors of the targets in each fit; null where a fit has none of them, or no residual degrees of freedom, or one cluster. */
+export function errorsFor(
+  { design, factor, variance, passing }: SlopesQuestion,
+  fits: readonly Fit[],
+  targets: readonly number[],
+): (CoefficientErrors | null)[] {
+  const able = fits.filter((fit) => fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1));
+  const errors = manyErrors(design.frame, factor, able, targets, variance, passing);
+  const byFit = new Map(able.map((fit, i) => [fit, errors[i]]));
+  return fits.map((fit) => byFit.get(fit) ?? null);
+}
+
+export function productsOf(design: Design, modifiers: readonly string[]): number[] {
+  return modifiers.flatMap((name) => design.interactions.get(name)!.columns.flat());
 }
 
 function columnsOf(design: Design, names: readonly string[]): number[] {
@@ -53,15 +60,6 @@ function columnsOf(design: Design, names: readonly string[]): number[] {
 
 function exposureColumns(design: Design): number[] {
   return design.contrasts.map((c) => c.column).filter((c) => c >= 0);
-}
-
-const scratches = new WeakMap<Design, Scratch>();
-
-/** Only the covariance matrix of an interaction fit is ever read, so all of a design's share their row buffers. */
-function scratchFor(design: Design): Scratch {
-  let scratch = scratches.get(design);
-  if (!scratch) scratches.set(design, (scratch = { e: new Float64Array(design.frame.n), h: new Float64Array(design.frame.n) }));
-  return scratch;
 }
 
 /**

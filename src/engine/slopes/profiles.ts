@@ -61,7 +61,7 @@ function stopsOf(design: Design, name: string, stated: readonly (number | string
 }
 
 /** Median of a numeric modifier, commonest level of a category. */
-function middleOf(design: Design, name: string): Stop {
+export function middleOf(design: Design, name: string): Stop {
   const values = design.modifierValues.get(name)!;
   if (values.kind === "amount") return { value: quantile(Float64Array.from(values.values).sort(), 0.5), supported: true };
   const counts = values.levels.map(() => 0);

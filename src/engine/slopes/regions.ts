@@ -18,13 +18,8 @@ export function regionsOf(design: Design, interaction: InteractionFit, contrast:
   const values = design.modifierValues.get(modifier)!;
   if (interaction.modifiers.length !== 1 || values.kind === "category") return [];
   const { shared } = rangeOf(design, values.values);
-  const df = bandDf(design, interaction, contrast);
-  if (!shared || df === null) return [];
-  const q = design.covariates.get(modifier)!.basis.size;
-  const critical = {
-    pointwise: tCritical(level, df) ** 2,
-    simultaneous: (1 + q) * fQuantileUpper(1 - level, 1 + q, df),
-  };
+  const critical = criticalsOf(design, interaction, contrast, modifier, level);
+  if (!shared || !critical) return [];
   const sorted = Float64Array.from(values.values).sort();
   return (["pointwise", "simultaneous"] as const).flatMap((band) => {
     const signAt = (value: number) => bandSign(design, interaction, contrast, modifier, value, critical[band]);
@@ -46,10 +41,24 @@ export function regionsOf(design: Design, interaction: InteractionFit, contrast:
   });
 }
 
-function bandDf(design: Design, { fit, cov, modifiers }: InteractionFit, contrast: ContrastColumn): number | null {
+/** Squares of the critical values of a contrast's two bands along a modifier; null where there are no errors. */
+export function criticalsOf(
+  design: Design,
+  interaction: InteractionFit,
+  contrast: ContrastColumn,
+  modifier: string,
+  level: number,
+): Readonly<Record<Region["band"], number>> | null {
+  const df = bandDf(design, interaction, contrast, modifier);
+  if (df === null) return null;
+  const q = design.covariates.get(modifier)!.basis.size;
+  return { pointwise: tCritical(level, df) ** 2, simultaneous: (1 + q) * fQuantileUpper(1 - level, 1 + q, df) };
+}
+
+function bandDf(design: Design, { fit, cov }: InteractionFit, contrast: ContrastColumn, modifier: string): number | null {
   if (!cov) return null;
   const g = design.exposure.columns.indexOf(contrast.column);
-  const columns = design.interactions.get(modifiers[0])!.columns[g].filter((c) => fit.columns.includes(c));
+  const columns = design.interactions.get(modifier)!.columns[g].filter((c) => fit.columns.includes(c));
   const dfs = columns.map((column) => cov.dfOf(Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0))));
   return dfs.length === 0 || dfs.includes(null) ? null : Math.min(...(dfs as number[]));
 }

@@ -1,20 +1,15 @@
 import type { SlopesTest, VariesReadout } from "../comparison";
 import type { Design } from "../design/types";
-import type { Start } from "../errors/added";
+import type { Passing } from "../errors/many";
 import type { CoefficientErrors } from "../errors/types";
 import type { Finding } from "../findings";
 import type { Factor, Fit } from "../linear/types";
 import type { Plan, Variance } from "../plan";
 
-/** What the slopes stage needs to know of one set. */
-export interface SlopesInput {
+/** What the slopes stage needs to know of the question. */
+export interface SlopesQuestion {
   readonly design: Design;
   readonly factor: Factor;
-  /** The set's own fit with its errors, which the tests build on; null where it has none. */
-  readonly start: Start | null;
-  /** Covariates of the set. */
-  readonly set: readonly string[];
-  readonly setIndex: number;
   readonly modifiers: readonly string[];
   readonly variance: Variance;
   readonly level: number;
@@ -24,6 +19,16 @@ export interface SlopesInput {
   readonly outcomeForm: "as is" | "log";
   /** Rows to average over where slopes differ: "all rows", a group, or null. */
   readonly average: string | null;
+  readonly passing: Passing;
+}
+
+/** One set of covariates whose slopes are asked for. */
+export interface SlopesSet {
+  readonly columns: readonly string[];
+  /** Position in the comparison, for findings. */
+  readonly index: number;
+  /** False where no contrast has a number: nothing is tested then. */
+  readonly estimable: boolean;
 }
 
 /** Whether a set has one effect, and what there is instead where it has not. */

@@ -1,0 +1,69 @@
+import type { Design } from "../design/types";
+import { classicalErrors, withoutRows } from "../errors/classical";
+import { covariance } from "../errors/covariance";
+import { influence } from "../errors/influence";
+import type { Passing } from "../errors/many";
+import type { Covariance } from "../errors/types";
+import type { Factor, Fit } from "../linear/types";
+import type { Variance } from "../plan";
+import { treeErrors } from "../tree";
+import type { TreeErrors } from "../tree";
+import type { Depth, SetFit, SolvedSet } from "./set";
+
+/**
+ * Gives each solved set its errors: all coefficients of the sets that are looked at in full, the exposure's alone (with the shift's) of the
+ * others, these together in one pass over the rows.
+ * @param depth by set; the base set, the first, is never "exposure"
+ */
+export function withErrors(
+  design: Design,
+  factor: Factor,
+  solved: readonly SolvedSet[],
+  variance: Variance,
+  depth: (set: number) => Depth,
+  passing: Passing,
+): SetFit[] {
+  const targets = design.exposure.columns;
+  const [first] = solved;
+  const base = first.enough ? ownErrors(design, first.fit, variance, depth(0)) : null;
+  const others = solved.flatMap((set, i) => (i > 0 && set.enough && depth(i) === "exposure" ? [i] : []));
+  const together = new Map<number, TreeErrors | null>();
+  if (others.length > 0) {
+    const psi = base && baseInfluences(design, first.fit, base);
+    const fits = others.map((i) => solved[i].fit);
+    const found = treeErrors({ frame: design.frame, factor, targets, kind: variance, base: psi, ...passing }, fits);
+    others.forEach((i, k) => together.set(i, found[k]));
+  }
+  return solved.map((set, i): SetFit => {
+    if (!set.enough) return { ...set, cov: null, shiftSquares: null };
+    if (i === 0) return { ...set, cov: base, shiftSquares: null };
+    const found = together.get(i);
+    if (!found) return { ...set, cov: ownErrors(design, set.fit, variance, depth(i)), shiftSquares: null };
+    return { ...set, cov: withoutRows(found.errors), shiftSquares: found.shift };
+  });
+}
+
+function ownErrors(design: Design, fit: Fit, variance: Variance, depth: Depth): Covariance {
+  if (depth === "first look") return withoutRows(classicalErrors(fit));
+  return covariance(design.frame, fit, variance, depth === "exposure" ? firstOf(fit, design.exposure.columns) : 0);
+}
+
+function firstOf(fit: Fit, columns: readonly number[]): number {
+  return Math.max(
+    0,
+    fit.columns.findIndex((column) => columns.includes(column)),
+  );
+}
+
+/** Of the base fit, on each exposure column's coefficient; null where one of them is set aside there. */
+function baseInfluences(design: Design, fit: Fit, cov: Covariance): Float64Array[] | null {
+  if (cov.clustered || !design.exposure.columns.every((column) => fit.columns.includes(column))) return null;
+  return design.exposure.columns.map((column) =>
+    influence(
+      design.frame,
+      fit,
+      cov,
+      Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0)),
+    ),
+  );
+}

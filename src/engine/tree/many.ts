@@ -1,0 +1,90 @@
+import { addLeverage, takeOut } from "./kernels";
+import type { Finish, Meat, Sums } from "./types";
+
+/** A block of rows where a model's path has been taken out: offsets into `w` of the targets, the outcome and the leverages so far. */
+export interface Place {
+  readonly w: Float64Array;
+  readonly targets: readonly number[];
+  readonly outcome: number;
+  readonly leverage: number;
+  /** Free room for q + 3 columns of `stride` rows. */
+  readonly room: number;
+  readonly stride: number;
+  readonly height: number;
+}
+
+/** Any number of targets and any kind of error: takes the targets out one after another, then adds the block's sums. */
+export function finishMany(
+  { w, targets, outcome, leverage, room, stride, height }: Place,
+  finish: Finish,
+  kind: Meat,
+  base: readonly Float64Array[] | null,
+  start: number,
+  sums: Sums,
+): void {
+  const q = targets.length;
+  const at = (a: number) => room + a * stride;
+  const [e, h, scaled] = [at(q), at(q + 1), at(q + 2)];
+  for (let a = 0; a < q; a++) w.copyWithin(at(a), targets[a], targets[a] + height);
+  w.copyWithin(e, outcome, outcome + height);
+  w.copyWithin(h, leverage, leverage + height);
+  for (let a = 0; a < q; a++) {
+    for (let b = a + 1; b < q; b++) takeOut(w, at(b), at(b), at(a), finish.shares[a * (q + 1) + b], height);
+    takeOut(w, e, e, at(a), finish.shares[a * (q + 1) + q], height);
+    addLeverage(w, h, h, at(a), finish.inverse[a], height);
+  }
+  let gap = sums.gap[finish.model];
+  for (let i = 0; i < height; i++) {
+    const left = 1 - w[h + i];
+    if (left < gap) gap = left;
+    const residual = w[e + i];
+    const influence = residual / left;
+    w[scaled + i] = kind === "HC3" ? influence * influence : kind === "HC2" ? residual * influence : residual * residual;
+    w[h + i] = influence;
+  }
+  sums.gap[finish.model] = gap;
+  addMeat(w, at, q, scaled, height, sums.meat, finish.model);
+  if (base) addShift(w, at, q, { influence: h, height, start }, finish, base, sums.shift);
+}
+
+function addMeat(
+  w: Float64Array,
+  at: (a: number) => number,
+  q: number,
+  scaled: number,
+  height: number,
+  meat: Float64Array,
+  model: number,
+): void {
+  let place = (model * q * (q + 1)) / 2;
+  for (let a = 0; a < q; a++) {
+    const x = at(a);
+    for (let b = 0; b <= a; b++) {
+      const y = at(b);
+      let sum = 0;
+      for (let i = 0; i < height; i++) sum += w[x + i] * w[y + i] * w[scaled + i];
+      meat[place++] += sum;
+    }
+  }
+}
+
+function addShift(
+  w: Float64Array,
+  at: (a: number) => number,
+  q: number,
+  { influence, height, start }: { influence: number; height: number; start: number },
+  { weights, model }: Finish,
+  base: readonly Float64Array[],
+  shift: Float64Array,
+): void {
+  for (let a = 0; a < q; a++) {
+    let sum = 0;
+    for (let i = 0; i < height; i++) {
+      let along = 0;
+      for (let c = a; c < q; c++) along += weights[a * q + c] * w[at(c) + i];
+      const moved = along * w[influence + i] - base[a][start + i];
+      sum += moved * moved;
+    }
+    shift[model * q + a] += sum;
+  }
+}
