@@ -1,8 +1,8 @@
 import type { ContrastColumn, Design } from "../design/types";
 import { covariance } from "../errors/covariance";
-import { fitColumns } from "../linear/fit";
 import type { Factor } from "../linear/types";
 import type { Variance } from "../plan";
+import { hasErrors, solveJoint } from "../slopes/fit";
 import type { InteractionFit } from "../slopes/types";
 
 /** The fit a figure is drawn from, with the place of everything that is not drawn along. */
@@ -16,7 +16,7 @@ export interface FigureFit extends InteractionFit {
   readonly level: number;
 }
 
-/** The columns of a figure's fit, as a readout's joint fit has them: constant, covariates, exposure, products. */
+/** The fit a readout of these modifiers rests on, with the errors of all its coefficients. */
 export function fitFigure(
   design: Design,
   factor: Factor,
@@ -24,13 +24,9 @@ export function fitFigure(
   modifiers: readonly string[],
   variance: Variance,
 ): InteractionFit {
-  const covariates = [...new Set([...set, ...modifiers])].flatMap((name) => design.covariates.get(name)!.columns);
-  const exposure = design.contrasts.map((contrast) => contrast.column).filter((column) => column >= 0);
-  const products = modifiers.flatMap((name) => design.interactions.get(name)!.columns.flat());
-  const fit = fitColumns(factor, [0, ...covariates, ...exposure, ...products]);
-  const enough = fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1);
+  const fit = solveJoint({ design, factor }, set, modifiers);
   // a line's band needs the errors of every coefficient, the constant's too
-  return { fit, cov: enough ? covariance(design.frame, fit, variance) : null, modifiers };
+  return { fit, cov: hasErrors(design, variance, fit) ? covariance(design.frame, fit, variance) : null, modifiers };
 }
 
 /** The values of all the fit's modifiers where the drawn one has a given value. */

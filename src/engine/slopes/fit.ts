@@ -4,6 +4,7 @@ import { quadratic } from "../errors/quadratic";
 import { fitColumns } from "../linear/fit";
 import type { CoefficientErrors } from "../errors/types";
 import type { Fit } from "../linear/types";
+import type { Variance } from "../plan";
 import { tCritical } from "../probability";
 import type { InteractionFit, SlopesQuestion } from "./types";
 
@@ -26,15 +27,30 @@ export function solveTrial({ design, factor }: SlopesQuestion, set: readonly str
   ]);
 }
 
+/** The set, some modifiers and the exposure's products with them, for what is read out or drawn: without errors yet. */
+export function solveJoint(
+  { design, factor }: Pick<SlopesQuestion, "design" | "factor">,
+  set: readonly string[],
+  modifiers: readonly string[],
+): Fit {
+  const covariates = columnsOf(design, [...new Set([...set, ...modifiers])]);
+  return fitColumns(factor, [0, ...covariates, ...exposureColumns(design), ...productsOf(design, modifiers)]);
+}
+
+/** Whether a fit has what errors need: residual degrees of freedom, and more than one cluster where errors go by cluster. */
+export function hasErrors(design: Design, variance: Variance, fit: Fit): boolean {
+  return fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1);
+}
+
 /** A set, some modifiers and the exposure's products with them, for readouts: errors for the exposure's columns and the products. */
 export function fitInteractions(
   question: SlopesQuestion,
   sets: readonly (readonly string[])[],
   modifiers: readonly string[],
 ): InteractionFit[] {
-  const { design, factor } = question;
+  const { design } = question;
   const targets = [...exposureColumns(design), ...productsOf(design, modifiers)];
-  const fits = sets.map((set) => fitColumns(factor, [0, ...columnsOf(design, [...new Set([...set, ...modifiers])]), ...targets]));
+  const fits = sets.map((set) => solveJoint(question, set, modifiers));
   return errorsFor(question, fits, targets).map((cov, i) => ({ fit: fits[i], cov, modifiers }));
 }
 
@@ -44,7 +60,7 @@ export function errorsFor(
   fits: readonly Fit[],
   targets: readonly number[],
 ): (CoefficientErrors | null)[] {
-  const able = fits.filter((fit) => fit.residualDf > 0 && (!variance.startsWith("CR") || design.frame.clusters!.count > 1));
+  const able = fits.filter((fit) => hasErrors(design, variance, fit));
   const errors = manyErrors(design.frame, factor, able, targets, variance, passing);
   const byFit = new Map(able.map((fit, i) => [fit, errors[i]]));
   return fits.map((fit) => byFit.get(fit) ?? null);
