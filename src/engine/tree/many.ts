@@ -1,9 +1,10 @@
-import { addLeverage, takeOut } from "./kernels";
+import type { Kernels } from "./kernels";
 import type { Finish, Meat, Sums } from "./types";
 
 /** A block of rows where a model's path has been taken out: offsets into `w` of the targets, the outcome and the leverages so far. */
 export interface Place {
   readonly w: Float64Array;
+  readonly kernels: Kernels;
   readonly targets: readonly number[];
   readonly outcome: number;
   readonly leverage: number;
@@ -15,11 +16,10 @@ export interface Place {
 
 /** Any number of targets and any kind of error: takes the targets out one after another, then adds the block's sums. */
 export function finishMany(
-  { w, targets, outcome, leverage, room, stride, height }: Place,
+  { w, kernels, targets, outcome, leverage, room, stride, height }: Place,
   finish: Finish,
   kind: Meat,
-  base: readonly Float64Array[] | null,
-  start: number,
+  base: readonly number[] | null,
   sums: Sums,
 ): void {
   const q = targets.length;
@@ -29,9 +29,9 @@ export function finishMany(
   w.copyWithin(e, outcome, outcome + height);
   w.copyWithin(h, leverage, leverage + height);
   for (let a = 0; a < q; a++) {
-    for (let b = a + 1; b < q; b++) takeOut(w, at(b), at(b), at(a), finish.shares[a * (q + 1) + b], height);
-    takeOut(w, e, e, at(a), finish.shares[a * (q + 1) + q], height);
-    addLeverage(w, h, h, at(a), finish.inverse[a], height);
+    for (let b = a + 1; b < q; b++) kernels.takeOut(at(b), at(b), at(a), finish.shares[a * (q + 1) + b], height);
+    kernels.takeOut(e, e, at(a), finish.shares[a * (q + 1) + q], height);
+    kernels.addLeverage(h, h, at(a), finish.inverse[a], height);
   }
   let gap = sums.gap[finish.model];
   for (let i = 0; i < height; i++) {
@@ -44,7 +44,7 @@ export function finishMany(
   }
   sums.gap[finish.model] = gap;
   addMeat(w, at, q, scaled, height, sums.meat, finish.model);
-  if (base) addShift(w, at, q, { influence: h, height, start }, finish, base, sums.shift);
+  if (base) addShift(w, at, q, { influence: h, height }, finish, base, sums.shift);
 }
 
 function addMeat(
@@ -72,9 +72,9 @@ function addShift(
   w: Float64Array,
   at: (a: number) => number,
   q: number,
-  { influence, height, start }: { influence: number; height: number; start: number },
+  { influence, height }: { influence: number; height: number },
   { weights, model }: Finish,
-  base: readonly Float64Array[],
+  base: readonly number[],
   shift: Float64Array,
 ): void {
   for (let a = 0; a < q; a++) {
@@ -82,7 +82,7 @@ function addShift(
     for (let i = 0; i < height; i++) {
       let along = 0;
       for (let c = a; c < q; c++) along += weights[a * q + c] * w[at(c) + i];
-      const moved = along * w[influence + i] - base[a][start + i];
+      const moved = along * w[influence + i] - w[base[a] + i];
       sum += moved * moved;
     }
     shift[model * q + a] += sum;

@@ -1,17 +1,19 @@
-import { addLeverage, finishOne, finishOneShift, leafOne, leafOneShift, takeOut } from "./kernels";
-import type { Found, One } from "./kernels";
+import { compiledKernels } from "./compiled";
+import { BLOCK, plainKernels, RESULT } from "./kernels";
+import type { Kernels, Last } from "./kernels";
 import { finishMany } from "./many";
 import type { Meat, Node, Program, RowSource, Sums } from "./types";
 
-/** Rows worked on at a time: the levels of the tree then stay in the second-level cache. */
-const BLOCK = 256;
 /** Blocks between two looks at the cancel flag. */
 const BLOCKS_A_LOOK = 8;
+
+let usual: Kernels | undefined;
 
 /**
  * Adds the sums of every model over the rows `from` … `to`: each block of rows is carried down the tree once, a column at a time, so that a
  * model costs about three multiplications of a column (20 operations a row), however many columns it has.
  * @param stop looked at between blocks; may throw
+ * @param kernels the inner loops; by default the compiled ones where they run
  */
 export function walkRows(
   program: Program,
@@ -21,35 +23,49 @@ export function walkRows(
   to: number,
   sums: Sums,
   stop: () => void,
+  kernels: Kernels = (usual ??= compiledKernels() ?? plainKernels()),
 ): void {
-  const { columns, targets: q, depth } = program;
-  const level = (columns.length + 2) * BLOCK;
-  const w = new Float64Array((depth + 1) * level + (q + 3) * BLOCK);
-  const walk: Walk = { w, level, outcome: columns.length * BLOCK, room: (depth + 1) * level, q, kind, base: source.base, sums };
+  const walk = layOut(program, source, kind, sums, kernels);
+  const { w, outcome } = walk;
+  const lasts = program.nodes.map((node) => (program.targets === 1 && kind === "HC3" ? lastOf(node) : null));
   const roots = source.weights ? new Float64Array(BLOCK) : null;
   for (let start = from, count = 0; start < to; start += BLOCK, count++) {
     if (count % BLOCKS_A_LOOK === 0) stop();
     const height = Math.min(BLOCK, to - start);
     if (roots) for (let i = 0; i < height; i++) roots[i] = Math.sqrt(source.weights![start + i]);
     source.columns.forEach((column, slot) => load(w, slot * BLOCK, column, start, height, 1 / program.scale[slot], roots));
-    w.fill(0, (columns.length + 1) * BLOCK, (columns.length + 1) * BLOCK + height);
-    for (const node of program.nodes) visit(walk, node, start, height);
+    w.fill(0, outcome + BLOCK, outcome + 2 * BLOCK);
+    source.base?.forEach((column, a) => load(w, walk.base![a], column, start, height, 1, null));
+    const even = height + (height % 2);
+    program.nodes.forEach((node, i) => visit(walk, node, lasts[i], even));
   }
 }
 
+/** The buffer: a level for each column taken (its columns, the outcome, the leverages), room to finish in, the base's influences, a result. */
 interface Walk {
   readonly w: Float64Array;
-  /** Length of a level: its columns, the outcome, the leverages. */
+  readonly kernels: Kernels;
   readonly level: number;
   /** Where the outcome stands in a level. */
   readonly outcome: number;
   readonly room: number;
+  readonly base: readonly number[] | null;
+  readonly result: number;
   readonly q: number;
   readonly kind: Meat;
-  readonly base: readonly Float64Array[] | null;
   readonly sums: Sums;
 }
 
+function layOut({ columns, targets: q, depth }: Program, source: RowSource, kind: Meat, sums: Sums, kernels: Kernels): Walk {
+  const level = (columns.length + 2) * BLOCK;
+  const room = (depth + 1) * level;
+  const base = source.base?.map((_, a) => room + (q + 3 + a) * BLOCK) ?? null;
+  const result = room + (q + 3 + (base?.length ?? 0)) * BLOCK;
+  const w = kernels.room(result + RESULT);
+  return { w, kernels, level, outcome: columns.length * BLOCK, room, base, result, q, kind, sums };
+}
+
+/** A block's rows of a column; the row after an odd number of them is zero. */
 function load(
   w: Float64Array,
   at: number,
@@ -61,53 +77,52 @@ function load(
 ): void {
   if (roots) for (let i = 0; i < height; i++) w[at + i] = column[start + i] * factor * roots[i];
   else for (let i = 0; i < height; i++) w[at + i] = column[start + i] * factor;
+  if (height % 2 === 1) w[at + height] = 0;
 }
 
-const found: Found = { meat: 0, shift: 0, gap: 0 };
+/** For a node where a model with one target ends, under HC3; null for others. */
+function lastOf({ inverse: inverseX, shares, finish }: Node): Last | null {
+  if (!finish) return null;
+  const [shareTarget, shareOutcome] = shares.subarray(shares.length - 2);
+  return { inverseX, shareTarget, shareOutcome, share: finish.shares[1], inverse: finish.inverse[0] };
+}
 
-function visit(walk: Walk, node: Node, start: number, height: number): void {
-  const { w, level, outcome, q, kind, base, sums } = walk;
+/** @param last where a model with one target ends here, under HC3 */
+function visit(walk: Walk, node: Node, last: Last | null, height: number): void {
+  const { kernels, level, outcome, q, kind } = walk;
   const above = (node.depth - 1) * level;
   const here = node.depth * level;
   const x = above + node.take * BLOCK;
-  const leverage = outcome + BLOCK;
   const { finish } = node;
-  const single = q === 1 && kind === "HC3";
-  if (node.leaf && finish && single) {
-    const one = oneAt(above, outcome, finish.shares[1], finish.inverse[0]);
-    // a leaf's slots are the target and the outcome
-    const [shareTarget, shareOutcome] = node.shares;
-    found.gap = sums.gap[finish.model];
-    if (base) leafOneShift(w, x, node.inverse, shareTarget, shareOutcome, one, height, found, finish.weights[0], base[0], start);
-    else leafOne(w, x, node.inverse, shareTarget, shareOutcome, one, height, found);
-    settle(sums, finish.model, base !== null);
-    return;
-  }
-  for (let k = 0; k < node.slots.length; k++) {
+  // one target's and the outcome's shares come last; a leaf has no others
+  const others = last ? node.slots.length - 2 : node.slots.length;
+  for (let k = 0; k < others; k++) {
     const slot = node.slots[k] * BLOCK;
-    takeOut(w, here + slot, above + slot, x, node.shares[k], height);
+    kernels.takeOut(here + slot, above + slot, x, node.shares[k], height);
   }
-  addLeverage(w, here + leverage, above + leverage, x, node.inverse, height);
-  if (!finish) return;
-  if (single) {
-    const one = oneAt(here, outcome, finish.shares[1], finish.inverse[0]);
-    found.gap = sums.gap[finish.model];
-    if (base) finishOneShift(w, one, height, found, finish.weights[0], base[0], start);
-    else finishOne(w, one, height, found);
-    settle(sums, finish.model, base !== null);
+  if (last) {
+    finishOne(walk, node, last, x, above + outcome - BLOCK, here + outcome - BLOCK, height);
     return;
   }
+  const leverage = outcome + BLOCK;
+  kernels.addLeverage(here + leverage, above + leverage, x, node.inverse, height);
+  if (!finish) return;
+  const { w, room, base, sums } = walk;
   const targets = Array.from({ length: q }, (_, a) => here + outcome - (q - a) * BLOCK);
-  const place = { w, targets, outcome: here + outcome, leverage: here + leverage, room: walk.room, stride: BLOCK, height };
-  finishMany(place, finish, kind, base, start, sums);
+  const place = { w, kernels, targets, outcome: here + outcome, leverage: here + leverage, room, stride: BLOCK, height };
+  finishMany(place, finish, kind, base, sums);
 }
 
-function oneAt(at: number, outcome: number, share: number, inverse: number): One {
-  return { target: at + outcome - BLOCK, outcome: at + outcome, leverage: at + outcome + BLOCK, share, inverse };
-}
-
-function settle(sums: Sums, model: number, shift: boolean): void {
-  sums.meat[model] += found.meat;
-  sums.gap[model] = found.gap;
-  if (shift) sums.shift[model] += found.shift;
+function finishOne(walk: Walk, node: Node, last: Last, x: number, from: number, to: number, height: number): void {
+  const { w, kernels, base, result, sums } = walk;
+  const { model, weights } = node.finish!;
+  w[result + 2] = sums.gap[model];
+  if (base) {
+    if (node.leaf) kernels.leafShift(x, from, last, weights[0], base[0], height, result);
+    else kernels.stepShift(x, from, to, last, weights[0], base[0], height, result);
+    sums.shift[model] += w[result + 1];
+  } else if (node.leaf) kernels.leaf(x, from, last, height, result);
+  else kernels.step(x, from, to, last, height, result);
+  sums.meat[model] += w[result];
+  sums.gap[model] = w[result + 2];
 }

@@ -1,3 +1,4 @@
+import { readFileSync } from "node:fs";
 import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { covariance } from "../../../src/engine/errors/covariance";
@@ -7,8 +8,15 @@ import { fitColumns } from "../../../src/engine/linear/fit";
 import type { Fit, Frame } from "../../../src/engine/linear/types";
 import type { Variance } from "../../../src/engine/plan";
 import { treeErrors } from "../../../src/engine/tree";
+import { compiledKernels } from "../../../src/engine/tree/compiled";
+import { emptySums } from "../../../src/engine/tree/halves";
+import { plainKernels } from "../../../src/engine/tree/kernels";
+import { writeProgram } from "../../../src/engine/tree/program";
+import { walkRows } from "../../../src/engine/tree/rows";
+import { growTree } from "../../../src/engine/tree/trie";
 import { relativeError, TOLERANCE } from "../../tolerances";
 import { seeded } from "../fixtures";
+import { translate } from "./compile.mjs";
 
 const KINDS: readonly Variance[] = ["classical", "HC0", "HC1", "HC2", "HC3"];
 
@@ -35,6 +43,37 @@ function everyFit(frame: Frame, covariates: number, targets: readonly number[]):
 
 const unit = (fit: Fit, column: number) => Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0));
 const targetsOf = (covariates: number, targets: number) => Array.from({ length: targets }, (_, a) => covariates + 1 + a);
+
+describe("the compiled loops", () => {
+  it("are kernels.wat, translated", async () => {
+    expect(readFileSync("src/engine/tree/kernels.wasm.ts", "utf8")).toBe(await translate());
+  });
+
+  it("give what the plain ones give, whatever the height of the last block", () => {
+    for (const [n, q] of [
+      [256, 1],
+      [257, 1],
+      [700, 1],
+      [511, 2],
+    ] as const) {
+      const frame = frameOf(n, n, 3, q, true);
+      const targets = targetsOf(3, q);
+      const fits = everyFit(frame, 3, targets);
+      const { roots, models } = growTree(fits.map((fit) => fit.columns.slice(0, -q)));
+      const { program } = writeProgram(factorise(frame), roots, models, targets);
+      const columns = [...program.columns.map((column) => frame.columns[column]), frame.outcome];
+      for (const base of [null, targets.map((column) => frame.columns[column])]) {
+        const source = { n, columns, weights: frame.weights, base };
+        const [plain, compiled] = [plainKernels(), compiledKernels()!].map((kernels) => {
+          const sums = emptySums(program);
+          walkRows(program, source, "HC3", 0, n, sums, () => {}, kernels);
+          return [...sums.meat, ...sums.shift, ...sums.gap];
+        });
+        compiled.forEach((value, i) => expect(relativeError(value, plain[i])).toBeLessThan(1e-12));
+      }
+    }
+  });
+});
 
 describe("errors of many fits in one pass over the rows", () => {
   it("are those of each fit's own pass: every kind, one target or several, weighted or not", () => {

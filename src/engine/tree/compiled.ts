@@ -1,0 +1,49 @@
+import type { Kernels } from "./kernels";
+import { KERNELS_WASM } from "./kernels.wasm";
+
+/** What kernels.wat exports; every offset and height counts doubles. */
+interface Exports {
+  readonly memory: WebAssembly.Memory;
+  takeOut(to: number, from: number, x: number, share: number, height: number): void;
+  addLeverage(to: number, from: number, x: number, inverse: number, height: number): void;
+  leaf(...numbers: number[]): void;
+  leafShift(...numbers: number[]): void;
+  step(...numbers: number[]): void;
+  stepShift(...numbers: number[]): void;
+}
+
+const PAGE_BYTES = 65536;
+let compiled: WebAssembly.Module | null | undefined;
+
+/** The loops as two-lane instructions (WebAssembly, written in kernels.wat): about three times as fast. Null where they cannot run. */
+export function compiledKernels(): Kernels | null {
+  if (compiled === undefined) compiled = compile();
+  if (compiled === null) return null;
+  const wasm = new WebAssembly.Instance(compiled).exports as unknown as Exports;
+  let w = new Float64Array(wasm.memory.buffer);
+  return {
+    room: (doubles) => {
+      const short = doubles * 8 - wasm.memory.buffer.byteLength;
+      if (short > 0) wasm.memory.grow(Math.ceil(short / PAGE_BYTES));
+      return (w = w.byteLength === wasm.memory.buffer.byteLength ? w : new Float64Array(wasm.memory.buffer));
+    },
+    takeOut: wasm.takeOut,
+    addLeverage: wasm.addLeverage,
+    leaf: (x, from, { inverseX, shareTarget, shareOutcome, share, inverse }, height, result) =>
+      wasm.leaf(x, from, inverseX, shareTarget, shareOutcome, share, inverse, height, result),
+    leafShift: (x, from, { inverseX, shareTarget, shareOutcome, share, inverse }, weight, base, height, result) =>
+      wasm.leafShift(x, from, inverseX, shareTarget, shareOutcome, share, inverse, weight, base, height, result),
+    step: (x, from, to, { inverseX, shareTarget, shareOutcome, share, inverse }, height, result) =>
+      wasm.step(x, from, to, inverseX, shareTarget, shareOutcome, share, inverse, height, result),
+    stepShift: (x, from, to, { inverseX, shareTarget, shareOutcome, share, inverse }, weight, base, height, result) =>
+      wasm.stepShift(x, from, to, inverseX, shareTarget, shareOutcome, share, inverse, weight, base, height, result),
+  };
+}
+
+function compile(): WebAssembly.Module | null {
+  try {
+    return new WebAssembly.Module(Uint8Array.from(atob(KERNELS_WASM), (letter) => letter.charCodeAt(0)));
+  } catch {
+    return null; // no WebAssembly, or no two-lane instructions
+  }
+}
