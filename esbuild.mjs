@@ -17,6 +17,7 @@ const node = { ...shared, platform: "node", format: "cjs", target: "node20", mai
 const programs = [
   { ...node, entryPoints: { extension: "src/extension.ts" }, external: ["vscode"] },
   { ...node, entryPoints: { worker: "src/host/worker/main.ts" } },
+  { ...node, entryPoints: { assistant: "src/threads/main.ts" } },
   { ...node, entryPoints: { cli: "src/cli.ts" }, banner: { js: "#!/usr/bin/env node" } },
   {
     ...shared,

@@ -4,7 +4,7 @@ import { defineConfig } from "vitest/config";
 export default defineConfig({
   test: {
     root: new URL("..", import.meta.url).pathname,
-    include: ["test/{engine,data,plan,report,reference,house,cli,host}/**/*.test.ts"],
+    include: ["test/{engine,data,plan,report,reference,house,cli,host,threads,bench}/**/*.test.ts"],
     setupFiles: ["test/setup.ts"],
     testTimeout: 60_000,
     maxWorkers: 2,

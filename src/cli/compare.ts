@@ -1,3 +1,4 @@
+import { join } from "node:path";
 import { compare } from "../engine/compare";
 import type { Comparison } from "../engine/comparison";
 import type { Problem } from "../engine/findings";
@@ -8,6 +9,7 @@ import { toMarkdown } from "../report/markdown";
 import { present } from "../report/present";
 import { toText } from "../report/text";
 import { sayProblem } from "../report/wording/problem";
+import { SecondThread } from "../threads/second";
 import type { Arguments } from "./arguments";
 import { dateOf } from "./date";
 import { readInput } from "./input";
@@ -24,6 +26,8 @@ export interface Said {
   readonly aside: string;
 }
 
+const second = new SecondThread(join(__dirname, "assistant.js"));
+
 /** @throws Refusal where the input cannot be used */
 export function runCompare({ positionals: [path], values }: Arguments): Said {
   const read = readInput(path, values.get("missing") as readonly string[] | undefined);
@@ -39,7 +43,7 @@ export function runCompare({ positionals: [path], values }: Arguments): Said {
   const to = values.get("to") as string | undefined;
   if (to !== undefined) checkPlace(to, files);
   const format = (values.get("as") ?? "text") as Format;
-  const out = written(compare(table, question.plan), question, format);
+  const out = written(compare(table, question.plan, second.passing(table.rows)), question, format);
   const aside = question.filledIn.length > 0 ? say.guessed(question.filledIn) + "\n" : "";
   if (to === undefined) return { out, aside };
   writeFile(to, out, files);

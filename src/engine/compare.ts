@@ -2,11 +2,11 @@ import { stopIf } from "./cancelled";
 import type { Comparison, SetResult } from "./comparison";
 import { buildDesign, countGroups } from "./design/build";
 import type { Design } from "./design/types";
-import type { Passing } from "./errors/many";
 import type { Finding, Reason } from "./findings";
 import { finiteComparison } from "./finite";
 import { factorise } from "./linear/factorise";
 import type { Factor } from "./linear/types";
+import type { Passing } from "./passes/types";
 import type { Plan, Variance } from "./plan";
 import { findProblems } from "./question/problems";
 import { resolveQuestion } from "./question/resolve";
@@ -24,9 +24,7 @@ import type { Rows } from "./rows/common";
 import { readSlopes } from "./slopes";
 import type { Table } from "./table";
 
-export interface CompareOptions {
-  /** Asked between sets and row blocks; true stops the work with `Cancelled`. */
-  readonly cancelled?: () => boolean;
+export interface CompareOptions extends Passing {
   /**
    * Called once with a first look (estimates with classical errors, slopes verdicts from them, no shifts; its question says "classical") where
    * the plan's errors take longer. A set whose slopes differ there has no number there either.
@@ -48,7 +46,9 @@ const IN_FULL = 2e6;
  * @returns a comparison without NaN or infinity; what the data do not allow is a `none` readout or a finding
  * @throws Cancelled; Error (a bug) when the plan has problems
  */
-export function compare(table: Table, plan: Plan, { cancelled, preview }: CompareOptions = {}): Comparison {
+export function compare(table: Table, plan: Plan, options: CompareOptions = {}): Comparison {
+  const { preview, ...passing } = options;
+  const { memory } = passing;
   const [problem] = findProblems(table, plan);
   if (problem) throw new Error(`compare was called with an unusable plan: ${problem.code}`);
   const resolved = resolveQuestion(table, plan);
@@ -63,9 +63,10 @@ export function compare(table: Table, plan: Plan, { cancelled, preview }: Compar
       [],
     );
   const { modifiers } = resolved.question;
-  const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers);
-  const factor = factorise(design.frame, cancelled);
-  const work = { table, resolved, rows, design, factor, passing: { cancelled } };
+  memory?.reset();
+  const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers, memory);
+  const factor = factorise(design.frame, passing);
+  const work = { table, resolved, rows, design, factor, passing };
   if (preview && isLong(resolved, rows))
     preview(finish({ ...head, resolved: asClassical(resolved) }, design, firstLook(work), []));
   const judged = judgeAll(work, resolved.question.variance, depthOf(resolved, rows));

@@ -30,9 +30,11 @@ const RULES: Readonly<Record<string, Rule>> = {
   plan: { values: ["engine/question"], types: ["engine"], packages: /^jsonc-parser$/ },
   report: { values: [], types: ["engine", "plan"], packages: NOTHING },
   protocol: { values: [], types: ["engine", "plan", "report"], packages: NOTHING },
-  host: { values: [...everything, "protocol"], types: [], packages: /^(vscode$|node:)/ },
-  extension: { values: [...everything, "protocol", "host"], types: [], packages: /^(vscode$|node:)/ },
-  cli: { values: everything, types: [], packages: NODE },
+  // a thread over memory that the engine's passes share: Node's alone
+  threads: { values: ["engine/passes", "engine/cancelled"], types: [], packages: /^node:worker_threads$/ },
+  host: { values: [...everything, "protocol", "threads"], types: [], packages: /^(vscode$|node:)/ },
+  extension: { values: [...everything, "protocol", "threads", "host"], types: [], packages: /^(vscode$|node:)/ },
+  cli: { values: [...everything, "threads"], types: [], packages: NODE },
   webview: { values: ["protocol", "report"], types: ["engine"], packages: /^chart\.js(\/|$)/ },
 };
 

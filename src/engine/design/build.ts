@@ -1,10 +1,14 @@
 import type { Question } from "../comparison";
 import type { Clusters, Frame } from "../linear/types";
+import type { RowMemory } from "../passes/types";
 import type { Groups } from "../question/columns";
 import type { Resolved, Source } from "../question/resolve";
 import { amountBasis, centring } from "./amount";
 import { categoryBasis } from "./category";
 import type { Basis, Block, ContrastColumn, Design, ModifierValues } from "./types";
+
+/** Room for one column of the rows' length. */
+type Take = () => Float64Array;
 
 /** Minus sign of a contrast's name. */
 const MINUS = "−";
@@ -13,36 +17,39 @@ const MINUS = "−";
  * Every model of a comparison as columns on the given rows, built once: the constant, the covariates, the exposure, and the exposure times each
  * modifier. Numeric columns are centred and scaled (basis.raw undoes it); the outcome is centred.
  * @param rows table rows, complete for everything named
+ * @param memory where the columns are to live; the design is good until its next reset
  */
 export function buildDesign(
   resolved: Resolved,
   rows: Int32Array,
   covariates: readonly string[],
   modifiers: readonly string[],
+  memory?: RowMemory,
 ): Design {
-  const columns: Float64Array[] = [new Float64Array(rows.length).fill(1)];
+  const take: Take = () => memory?.take(rows.length) ?? new Float64Array(rows.length);
+  const columns: Float64Array[] = [take().fill(1)];
   const add = (values: Float64Array): number => columns.push(values) - 1;
   const blocks = new Map<string, Block>();
   for (const name of new Set([...covariates, ...modifiers])) {
     const source = resolved.sources.get(name)!;
     const basis = covariateBasis(source, rows);
-    blocks.set(name, { basis, columns: basisColumns(basis, source, rows).map(add) });
+    blocks.set(name, { basis, columns: basisColumns(basis, source, rows, take).map(add) });
   }
-  const { exposure, contrasts, group } = exposureBlock(resolved, rows, add);
+  const { exposure, contrasts, group } = exposureBlock(resolved, rows, take, add);
   const interactions = new Map<string, { columns: number[][] }>();
   for (const name of modifiers) {
     const own = blocks.get(name)!;
     interactions.set(name, {
-      columns: exposure.columns.map((g) => own.columns.map((k) => add(product(columns[g], columns[k])))),
+      columns: exposure.columns.map((g) => own.columns.map((k) => add(product(columns[g], columns[k], take())))),
     });
   }
-  const raw = gather(resolved.outcome, rows);
+  const raw = gather(resolved.outcome, rows, take());
   const { centre } = centring(raw);
   const frame: Frame = {
     n: rows.length,
     columns,
     outcome: less(raw, centre),
-    weights: resolved.weights ? gather(resolved.weights, rows) : null,
+    weights: resolved.weights ? gather(resolved.weights, rows, take()) : null,
     clusters: resolved.cluster ? compactClusters(resolved.cluster, rows) : null,
   };
   const modifierValues = new Map<string, ModifierValues>(
@@ -64,8 +71,8 @@ function covariateBasis(source: Source, rows: Int32Array): Basis {
   return categoryBasis(source.column, source.groups, gatherCodes(source.groups.codes, rows), source.reference);
 }
 
-function basisColumns(basis: Basis, source: Source, rows: Int32Array): Float64Array[] {
-  const columns = Array.from({ length: basis.size }, () => new Float64Array(rows.length));
+function basisColumns(basis: Basis, source: Source, rows: Int32Array, take: Take): Float64Array[] {
+  const columns = Array.from({ length: basis.size }, take);
   if (source.kind === "category") {
     const byLevel = source.groups.levels.map((level) => basis.at(level));
     for (let i = 0; i < rows.length; i++) {
@@ -88,12 +95,14 @@ function basisColumns(basis: Basis, source: Source, rows: Int32Array): Float64Ar
   return columns;
 }
 
-function exposureBlock(resolved: Resolved, rows: Int32Array, add: (values: Float64Array) => number) {
+function exposureBlock(resolved: Resolved, rows: Int32Array, take: Take, add: (values: Float64Array) => number) {
   const { exposure } = resolved;
   if (exposure.kind === "amount") {
     const values = gather(exposure.values, rows);
     const { centre, scale } = centring(values);
-    const column = add(values.map((value) => (value - centre) / scale));
+    const centred = take();
+    for (let i = 0; i < values.length; i++) centred[i] = (values[i] - centre) / scale;
+    const column = add(centred);
     const basis = amountBasis(exposure.column, "as is", values);
     const contrast: ContrastColumn = {
       contrast: `per ${exposure.per} ${exposure.column}`,
@@ -115,7 +124,7 @@ function exposureBlock(resolved: Resolved, rows: Int32Array, add: (values: Float
   const placed: number[] = [];
   order.slice(1).forEach((level, g) => {
     // A group without rows has no column, and so no number.
-    const column = counts[g + 1] > 0 && counts[0] > 0 ? add(indicator(codes, g + 1)) : -1;
+    const column = counts[g + 1] > 0 && counts[0] > 0 ? add(indicator(codes, g + 1, take())) : -1;
     if (column >= 0) placed.push(column);
     contrasts.push({ contrast: `${level} ${MINUS} ${reference}`, level, column, factor: 1 });
   });
@@ -139,14 +148,12 @@ function compactClusters({ codes }: Groups, rows: Int32Array): Clusters {
   return { codes: compact, count: place.size };
 }
 
-function indicator(codes: Int32Array, wanted: number): Float64Array {
-  const out = new Float64Array(codes.length);
-  for (let i = 0; i < codes.length; i++) if (codes[i] === wanted) out[i] = 1;
+function indicator(codes: Int32Array, wanted: number, out: Float64Array): Float64Array {
+  for (let i = 0; i < codes.length; i++) out[i] = codes[i] === wanted ? 1 : 0;
   return out;
 }
 
-function gather(values: Float64Array, rows: Int32Array): Float64Array {
-  const out = new Float64Array(rows.length);
+function gather(values: Float64Array, rows: Int32Array, out: Float64Array = new Float64Array(rows.length)): Float64Array {
   for (let i = 0; i < rows.length; i++) out[i] = values[rows[i]];
   return out;
 }
@@ -162,8 +169,7 @@ function less(values: Float64Array, centre: number): Float64Array {
   return values;
 }
 
-function product(a: Float64Array, b: Float64Array): Float64Array {
-  const out = new Float64Array(a.length);
+function product(a: Float64Array, b: Float64Array, out: Float64Array): Float64Array {
   for (let i = 0; i < a.length; i++) out[i] = a[i] * b[i];
   return out;
 }

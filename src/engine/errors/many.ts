@@ -1,18 +1,11 @@
 import type { Factor, Fit, Frame } from "../linear/types";
+import type { Passing } from "../passes/types";
 import type { Variance } from "../plan";
 import { treeErrors } from "../tree";
-import type { Assistant } from "../tree";
 import { classicalErrors } from "./classical";
 import { covariance } from "./covariance";
 import type { Scratch } from "./covariance";
 import type { CoefficientErrors } from "./types";
-
-/** What a pass over the rows may use and must look at. */
-export interface Passing {
-  readonly cancelled?: () => boolean;
-  /** A second thread for the second half of the rows. */
-  readonly assistant?: Assistant | null;
-}
 
 /**
  * Errors of the same last coefficients in many fits: classical ones from the fits, HC kinds by one pass over the rows for all, and what that
@@ -30,7 +23,7 @@ export function manyErrors(
   passing: Passing,
 ): (CoefficientErrors | null)[] {
   if (kind === "classical") return fits.map(classicalErrors);
-  const together = treeErrors({ frame, factor, targets, kind, base: null, ...passing }, fits);
+  const together = treeErrors({ frame, factor, targets, kind, base: null, passing }, fits);
   let scratch: Scratch | undefined;
   return fits.map((fit, i) => {
     const found = together[i];

@@ -43,7 +43,7 @@ export function slopesFigure(
   stopIf(cancelled);
   const modifiers = modifiersOf(set, choice.modifier);
   const design = buildDesign(resolved, common, set.adjustedFor, modifiers);
-  const factor = factorise(design.frame, cancelled);
+  const factor = factorise(design.frame, { cancelled });
   const lines = Uint32Array.from(common, (row) => table.lines[row]);
   const one = resolved.exposure.kind === "amount" && (readout.kind === "single" || readout.kind === "undecided") ? readout : null;
   return {

@@ -2,9 +2,9 @@ import type { Design } from "../design/types";
 import { classicalErrors, withoutRows } from "../errors/classical";
 import { covariance } from "../errors/covariance";
 import { influence } from "../errors/influence";
-import type { Passing } from "../errors/many";
 import type { Covariance } from "../errors/types";
 import type { Factor, Fit } from "../linear/types";
+import type { Passing, RowMemory } from "../passes/types";
 import type { Variance } from "../plan";
 import { treeErrors } from "../tree";
 import type { TreeErrors } from "../tree";
@@ -29,9 +29,9 @@ export function withErrors(
   const others = solved.flatMap((set, i) => (i > 0 && set.enough && depth(i) === "exposure" ? [i] : []));
   const together = new Map<number, TreeErrors | null>();
   if (others.length > 0) {
-    const psi = base && baseInfluences(design, first.fit, base);
+    const psi = base && baseInfluences(design, first.fit, base, passing.memory);
     const fits = others.map((i) => solved[i].fit);
-    const found = treeErrors({ frame: design.frame, factor, targets, kind: variance, base: psi, ...passing }, fits);
+    const found = treeErrors({ frame: design.frame, factor, targets, kind: variance, base: psi, passing }, fits);
     others.forEach((i, k) => together.set(i, found[k]));
   }
   return solved.map((set, i): SetFit => {
@@ -56,14 +56,14 @@ function firstOf(fit: Fit, columns: readonly number[]): number {
 }
 
 /** Of the base fit, on each exposure column's coefficient; null where one of them is set aside there. */
-function baseInfluences(design: Design, fit: Fit, cov: Covariance): Float64Array[] | null {
+function baseInfluences(design: Design, fit: Fit, cov: Covariance, memory?: RowMemory): Float64Array[] | null {
   if (cov.clustered || !design.exposure.columns.every((column) => fit.columns.includes(column))) return null;
-  return design.exposure.columns.map((column) =>
-    influence(
-      design.frame,
-      fit,
-      cov,
-      Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0)),
-    ),
-  );
+  return design.exposure.columns.map((column) => {
+    const unit = Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0));
+    const psi = influence(design.frame, fit, cov, unit);
+    if (!memory) return psi;
+    const kept = memory.take(psi.length);
+    kept.set(psi);
+    return kept;
+  });
 }

@@ -1,9 +1,9 @@
 import type { SlopesTest, VariesReadout } from "../comparison";
 import type { Design } from "../design/types";
-import type { Passing } from "../errors/many";
 import type { CoefficientErrors } from "../errors/types";
 import type { Finding } from "../findings";
 import type { Factor, Fit } from "../linear/types";
+import type { Passing } from "../passes/types";
 import type { Plan, Variance } from "../plan";
 
 /** What the slopes stage needs to know of the question. */

@@ -1,16 +1,13 @@
-import { stopIf } from "../cancelled";
 import { classicalErrors } from "../errors/classical";
 import { LEVERAGE_GAP } from "../errors/robust";
 import type { CoefficientErrors } from "../errors/types";
 import type { Factor, Fit, Frame } from "../linear/types";
 import type { Variance } from "../plan";
+import { inHalves } from "../passes/halves";
+import type { Passing } from "../passes/types";
 import { writeProgram } from "./program";
 import { growTree } from "./trie";
-import { walkInHalves } from "./halves";
-import type { Assistant } from "./halves";
 import type { Meat, Sums } from "./types";
-
-export type { Assistant, HalfTask } from "./halves";
 
 /** Errors of a fit's last coefficients, found together with many others'. */
 export interface TreeErrors {
@@ -27,8 +24,7 @@ export interface TreeInput {
   readonly kind: Variance;
   /** The base fit's influences on each target's coefficient, length n each, where the shift's error is wanted too. */
   readonly base: readonly Float64Array[] | null;
-  readonly cancelled?: () => boolean;
-  readonly assistant?: Assistant | null;
+  readonly passing: Passing;
 }
 
 /**
@@ -37,7 +33,7 @@ export interface TreeInput {
  * @throws Cancelled
  */
 export function treeErrors(input: TreeInput, fits: readonly Fit[]): (TreeErrors | null)[] {
-  const { frame, factor, targets, kind, base, cancelled } = input;
+  const { frame, factor, targets, kind, base, passing } = input;
   const none = fits.map(() => null);
   if (kind === "CR1" || kind === "CR2" || targets.length === 0) return none;
   const taken = fits.flatMap((fit, i) => (endsWith(fit, targets) && fit.residualSumOfSquares > 0 ? [i] : []));
@@ -51,15 +47,26 @@ export function treeErrors(input: TreeInput, fits: readonly Fit[]): (TreeErrors 
     weights: frame.weights,
     base,
   };
-  const sums = walkInHalves(program, source, meatOf(kind), () => stopIf(cancelled), input.assistant ?? null);
+  const task = { kind: "walk", program, source, meat: meatOf(kind) } as const;
+  const sums = addUp(inHalves(frame.n, (from, to) => ({ ...task, from, to }), passing));
   const weights = new Map(program.nodes.flatMap(({ finish }) => (finish ? [[finish.model, finish.weights] as const] : [])));
   const found: (TreeErrors | null)[] = [...none];
   taken.forEach((i, k) => {
     const model = end[k];
-    if (!held[model] || sums.gap[model] < LEVERAGE_GAP) return;
+    if (!held[model] || 1 + sums.gap[model] < LEVERAGE_GAP) return;
     found[i] = errorsOf(input, fits[i], weights.get(model)!, sums, model);
   });
   return found;
+}
+
+function addUp([first, second]: readonly (readonly Float64Array[])[]): Sums {
+  const [meat, shift, gap] = first;
+  if (second) {
+    for (let i = 0; i < meat.length; i++) meat[i] += second[0][i];
+    for (let i = 0; i < shift.length; i++) shift[i] += second[1][i];
+    for (let i = 0; i < gap.length; i++) gap[i] = Math.min(gap[i], second[2][i]);
+  }
+  return { meat, shift, gap };
 }
 
 function endsWith(fit: Fit, targets: readonly number[]): boolean {

@@ -33,7 +33,7 @@ export function finishMany(
     kernels.takeOut(e, e, at(a), finish.shares[a * (q + 1) + q], height);
     kernels.addLeverage(h, h, at(a), finish.inverse[a], height);
   }
-  let gap = sums.gap[finish.model];
+  let gap = 1 + sums.gap[finish.model];
   for (let i = 0; i < height; i++) {
     const left = 1 - w[h + i];
     if (left < gap) gap = left;
@@ -42,7 +42,7 @@ export function finishMany(
     w[scaled + i] = kind === "HC3" ? influence * influence : kind === "HC2" ? residual * influence : residual * residual;
     w[h + i] = influence;
   }
-  sums.gap[finish.model] = gap;
+  sums.gap[finish.model] = gap - 1;
   addMeat(w, at, q, scaled, height, sums.meat, finish.model);
   if (base) addShift(w, at, q, { influence: h, height }, finish, base, sums.shift);
 }

@@ -2,30 +2,34 @@ import { compiledKernels } from "./compiled";
 import { BLOCK, plainKernels, RESULT } from "./kernels";
 import type { Kernels, Last } from "./kernels";
 import { finishMany } from "./many";
-import type { Meat, Node, Program, RowSource, Sums } from "./types";
+import type { Meat, Node, Sums, WalkTask } from "./types";
 
 /** Blocks between two looks at the cancel flag. */
 const BLOCKS_A_LOOK = 8;
 
 let usual: Kernels | undefined;
 
+/** Lengths of the arrays of a walk's sums: meat, shift, gap. */
+export function walkSizes({ program: { models, targets: q } }: WalkTask): number[] {
+  return [(models * q * (q + 1)) / 2, models * q, models];
+}
+
 /**
- * Adds the sums of every model over the rows `from` … `to`: each block of rows is carried down the tree once, a column at a time, so that a
+ * Adds the sums of every model over a stretch of rows: each block of rows is carried down the tree once, a column at a time, so that a
  * model costs about three multiplications of a column (20 operations a row), however many columns it has.
+ * @param into meat, shift and gap of `Sums`, zero at first
  * @param stop looked at between blocks; may throw
  * @param kernels the inner loops; by default the compiled ones where they run
  */
 export function walkRows(
-  program: Program,
-  source: RowSource,
-  kind: Meat,
-  from: number,
-  to: number,
-  sums: Sums,
+  task: WalkTask,
+  into: readonly Float64Array[],
   stop: () => void,
   kernels: Kernels = (usual ??= compiledKernels() ?? plainKernels()),
 ): void {
-  const walk = layOut(program, source, kind, sums, kernels);
+  const { program, source, meat: kind, from, to } = task;
+  const [meat, shift, gap] = into;
+  const walk = layOut(task, { meat, shift, gap }, kernels);
   const { w, outcome } = walk;
   const lasts = program.nodes.map((node) => (program.targets === 1 && kind === "HC3" ? lastOf(node) : null));
   const roots = source.weights ? new Float64Array(BLOCK) : null;
@@ -56,7 +60,8 @@ interface Walk {
   readonly sums: Sums;
 }
 
-function layOut({ columns, targets: q, depth }: Program, source: RowSource, kind: Meat, sums: Sums, kernels: Kernels): Walk {
+function layOut({ program, source, meat: kind }: WalkTask, sums: Sums, kernels: Kernels): Walk {
+  const { columns, targets: q, depth } = program;
   const level = (columns.length + 2) * BLOCK;
   const room = (depth + 1) * level;
   const base = source.base?.map((_, a) => room + (q + 3 + a) * BLOCK) ?? null;
@@ -116,7 +121,7 @@ function visit(walk: Walk, node: Node, last: Last | null, height: number): void 
 function finishOne(walk: Walk, node: Node, last: Last, x: number, from: number, to: number, height: number): void {
   const { w, kernels, base, result, sums } = walk;
   const { model, weights } = node.finish!;
-  w[result + 2] = sums.gap[model];
+  w[result + 2] = 1 + sums.gap[model];
   if (base) {
     if (node.leaf) kernels.leafShift(x, from, last, weights[0], base[0], height, result);
     else kernels.stepShift(x, from, to, last, weights[0], base[0], height, result);
@@ -124,5 +129,5 @@ function finishOne(walk: Walk, node: Node, last: Last, x: number, from: number, 
   } else if (node.leaf) kernels.leaf(x, from, last, height, result);
   else kernels.step(x, from, to, last, height, result);
   sums.meat[model] += w[result];
-  sums.gap[model] = w[result + 2];
+  sums.gap[model] = w[result + 2] - 1;
 }

@@ -54,14 +54,25 @@ export interface RowSource {
   readonly base: readonly Float64Array[] | null;
 }
 
+/** A walk over a stretch of rows. */
+export interface WalkTask {
+  readonly kind: "walk";
+  readonly program: Program;
+  readonly source: RowSource;
+  readonly meat: Meat;
+  readonly from: number;
+  readonly to: number;
+}
+
 /** Sums over rows, by model. */
 export interface Sums {
   /** models × q(q + 1)/2: Σ of products of the left-over targets times the squared residual as the error kind takes it. */
   readonly meat: Float64Array;
   /** models × q: Σ (influence − base influence)²; zero where no shift is asked for. */
   readonly shift: Float64Array;
-  /** By model: the smallest 1 − h. */
+  /** By model: the smallest 1 − h, less 1. */
   readonly gap: Float64Array;
 }
 
+/** What a row's squared residual is divided by: nothing, 1 − h, or its square. */
 export type Meat = "HC0" | "HC2" | "HC3";

@@ -1,5 +1,6 @@
 import { Cancelled } from "../../engine/cancelled";
 import { compare } from "../../engine/compare";
+import type { CompareOptions } from "../../engine/compare";
 import type { Comparison } from "../../engine/comparison";
 import type { Problem } from "../../engine/findings";
 import type { Plan } from "../../engine/plan";
@@ -9,6 +10,7 @@ import { parsePlan } from "../../plan/parse";
 import { suggestPlan } from "../../plan/suggest";
 import { present } from "../../report/present";
 import { sayProblem } from "../../report/wording/problem";
+import type { SecondThread } from "../../threads/second";
 import type { Ask, Compared, CompareRequest, Outcome } from "./messages";
 import { questionState } from "./question";
 import type { Readings, TableRead } from "./readings";
@@ -24,6 +26,7 @@ export interface Hooks {
   readonly progress: (share: number) => void;
   readonly preview: (result: Compared) => void;
   readonly keep: (kept: KeptComparison) => void;
+  readonly second: SecondThread;
 }
 
 type ReadTable = Extract<TableRead, { kind: "table" }>;
@@ -65,18 +68,14 @@ export function runCompare(request: CompareRequest, readings: Readings, hooks: H
     hooks.preview(result(comparison, true));
     hooks.progress(0.7);
   };
-  return finish(read, plan, { cancelled, preview }, (comparison) => {
+  const passing = { cancelled, preview, ...hooks.second.passing(table.rows) };
+  return finish(read, plan, passing, (comparison) => {
     hooks.keep({ comparison, plan, guessed });
     return result(comparison, false);
   });
 }
 
-function finish(
-  read: ReadTable,
-  plan: Plan,
-  options: { cancelled: () => boolean; preview: (comparison: Comparison) => void },
-  result: (comparison: Comparison) => Compared,
-): Outcome {
+function finish(read: ReadTable, plan: Plan, options: CompareOptions, result: (comparison: Comparison) => Compared): Outcome {
   try {
     return { kind: "compared", result: result(compare(read.table, plan, options)) };
   } catch (error) {

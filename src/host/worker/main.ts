@@ -1,8 +1,10 @@
+import { join } from "node:path";
 import { parentPort } from "node:worker_threads";
 import { present } from "../../report/present";
 import { toMarkdown } from "../../report/markdown";
 import { toTabSeparated } from "../../report/table";
 import { sayProblem } from "../../report/wording/problem";
+import { SecondThread } from "../../threads/second";
 import { runCompare } from "./compare";
 import type { KeptComparison } from "./compare";
 import type { CompareRequest, FromWorker, Outcome, ToWorker } from "./messages";
@@ -13,6 +15,7 @@ const port = parentPort!;
 const readings = new Readings();
 const kept = new Map<string, KeptComparison>();
 const pathOf = new Map<string, string>();
+const second = new SecondThread(join(__dirname, "assistant.js"));
 const send = (message: FromWorker) => port.postMessage(message);
 
 port.on("message", (message: ToWorker) => {
@@ -44,6 +47,7 @@ function guarded(request: CompareRequest): Outcome {
     return runCompare(request, readings, {
       progress: (share) => send({ type: "progress", id: request.id, share }),
       preview: (result) => send({ type: "preview", id: request.id, result }),
+      second,
       keep: (comparison) => kept.set(request.session, comparison),
     });
   } catch (error) {
@@ -65,4 +69,5 @@ function forget(session: string): void {
   pathOf.delete(session);
   kept.delete(session);
   if (path !== undefined && ![...pathOf.values()].includes(path)) readings.forget(path);
+  if (pathOf.size === 0) second.end();
 }

@@ -1,4 +1,5 @@
 import { createHash } from "node:crypto";
+import { ReaderMemory } from "../../data/fast/memory";
 import { readTable } from "../../data/read";
 import type { Problem } from "../../engine/findings";
 import type { Plan } from "../../engine/plan";
@@ -26,6 +27,8 @@ interface Kept {
   ended: boolean;
   /** By the missing marks they were read with: plans on the same CSV share a reading. */
   tables: Map<string, Table>;
+  /** The arrays each of these tables stands in, for the next reading. */
+  readonly memories: Map<string, ReaderMemory>;
 }
 
 /** The files in use with their columns, kept between saves. */
@@ -58,12 +61,18 @@ export class Readings {
       kept.sha256 = null;
     }
     kept.ended = endsWithBreak(bytes);
-    const parsed = readTable(bytes, { file, missing });
+    const parsed = readTable(bytes, { file, missing }, this.memoryOf(kept, marks));
     if (!parsed.ok) return { kind: "problem", problem: parsed.problem, stamp };
     kept.tables.set(marks, parsed.table);
     kept.sha256 = parsed.table.source.sha256;
     if (known !== null && known === kept.sha256) return { kind: "same", stamp };
     return { kind: "table", table: parsed.table, stamp, ended: kept.ended };
+  }
+
+  private memoryOf({ memories }: Kept, marks: string): ReaderMemory {
+    let memory = memories.get(marks);
+    if (!memory) memories.set(marks, (memory = new ReaderMemory()));
+    return memory;
   }
 
   forget(path: string): void {
@@ -73,7 +82,7 @@ export class Readings {
   private entry(path: string): Kept {
     let kept = this.kept.get(path);
     if (!kept) {
-      kept = { file: new KeptFile(), stamp: null, at: 0, sha256: null, ended: true, tables: new Map() };
+      kept = { file: new KeptFile(), stamp: null, at: 0, sha256: null, ended: true, tables: new Map(), memories: new Map() };
       this.kept.set(path, kept);
     }
     return kept;

@@ -9,10 +9,9 @@ import type { Fit, Frame } from "../../../src/engine/linear/types";
 import type { Variance } from "../../../src/engine/plan";
 import { treeErrors } from "../../../src/engine/tree";
 import { compiledKernels } from "../../../src/engine/tree/compiled";
-import { emptySums } from "../../../src/engine/tree/halves";
 import { plainKernels } from "../../../src/engine/tree/kernels";
 import { writeProgram } from "../../../src/engine/tree/program";
-import { walkRows } from "../../../src/engine/tree/rows";
+import { walkRows, walkSizes } from "../../../src/engine/tree/rows";
 import { growTree } from "../../../src/engine/tree/trie";
 import { relativeError, TOLERANCE } from "../../tolerances";
 import { seeded } from "../fixtures";
@@ -65,9 +64,10 @@ describe("the compiled loops", () => {
       for (const base of [null, targets.map((column) => frame.columns[column])]) {
         const source = { n, columns, weights: frame.weights, base };
         const [plain, compiled] = [plainKernels(), compiledKernels()!].map((kernels) => {
-          const sums = emptySums(program);
-          walkRows(program, source, "HC3", 0, n, sums, () => {}, kernels);
-          return [...sums.meat, ...sums.shift, ...sums.gap];
+          const task = { kind: "walk", program, source, meat: "HC3", from: 0, to: n } as const;
+          const into = walkSizes(task).map((size) => new Float64Array(size));
+          walkRows(task, into, () => {}, kernels);
+          return into.flatMap((sums) => [...sums]);
         });
         compiled.forEach((value, i) => expect(relativeError(value, plain[i])).toBeLessThan(1e-12));
       }
@@ -91,7 +91,7 @@ describe("errors of many fits in one pass over the rows", () => {
           const frame = frameOf(seed, n, covariates, q, weighted);
           const targets = targetsOf(covariates, q);
           const fits = everyFit(frame, covariates, targets);
-          const found = treeErrors({ frame, factor: factorise(frame), targets, kind, base: null }, fits);
+          const found = treeErrors({ frame, factor: factorise(frame), targets, kind, base: null, passing: {} }, fits);
           fits.forEach((fit, i) => {
             const own = covariance(frame, fit, kind);
             const p = fit.columns.length;
@@ -124,7 +124,7 @@ describe("errors of many fits in one pass over the rows", () => {
       const [first] = fits;
       const cov = covariance(frame, first, kind);
       const base = targets.map((column) => influence(frame, first, cov, unit(first, column)));
-      const found = treeErrors({ frame, factor: factorise(frame), targets, kind, base }, fits);
+      const found = treeErrors({ frame, factor: factorise(frame), targets, kind, base, passing: {} }, fits);
       fits.slice(1).forEach((fit, i) => {
         const own = covariance(frame, fit, kind);
         targets.forEach((column, a) => {
@@ -140,10 +140,13 @@ describe("errors of many fits in one pass over the rows", () => {
   it("come from two halves of many rows, with or without a second thread, to the last bit", () => {
     const frame = frameOf(5, 50_100, 2, 1, false);
     const fits = everyFit(frame, 2, [3]);
-    const input = { frame, factor: factorise(frame), targets: [3], kind: "HC3" as const, base: null };
+    const input = { frame, factor: factorise(frame), targets: [3], kind: "HC3" as const, base: null, passing: {} };
     const alone = treeErrors(input, fits);
-    const refused = treeErrors({ ...input, assistant: { begin: () => null } }, fits);
-    const failed = treeErrors({ ...input, assistant: { begin: () => ({ wait: () => null, drop: () => {} }) } }, fits);
+    const refused = treeErrors({ ...input, passing: { assistant: { begin: () => null } } }, fits);
+    const failed = treeErrors(
+      { ...input, passing: { assistant: { begin: () => ({ wait: () => null, drop: () => {} }) } } },
+      fits,
+    );
     fits.forEach((fit, i) => {
       const own = covariance(frame, fit, "HC3").matrix;
       expect(relativeError(alone[i]!.errors.matrix[own.length - 1], own[own.length - 1])).toBeLessThan(TOLERANCE.coefficient);
@@ -159,18 +162,18 @@ describe("errors of many fits in one pass over the rows", () => {
     const lone = { ...frame, columns: [one, x, z.map((_, i) => (i === 3 ? 1 : 0)), d] };
     for (const odd of [near, lone]) {
       const fits = everyFit(odd, 2, [3]);
-      const found = treeErrors({ frame: odd, factor: factorise(odd), targets: [3], kind: "HC3", base: null }, fits);
+      const found = treeErrors({ frame: odd, factor: factorise(odd), targets: [3], kind: "HC3", base: null, passing: {} }, fits);
       expect(found.map((f) => f !== null)).toEqual([true, true, odd === near, false]);
     }
     const told = { ...frame, columns: [one, d, z, d] };
     const fits = everyFit(told, 2, [3]);
-    const found = treeErrors({ frame: told, factor: factorise(told), targets: [3], kind: "HC3", base: null }, fits);
+    const found = treeErrors({ frame: told, factor: factorise(told), targets: [3], kind: "HC3", base: null, passing: {} }, fits);
     expect(found.map((f) => f !== null)).toEqual([true, false, true, false]);
   });
 
   it("stop when told to", () => {
     const frame = frameOf(3, 100, 2, 1, false);
-    const input = { frame, factor: factorise(frame), targets: [3], kind: "HC3" as const, base: null };
-    expect(() => treeErrors({ ...input, cancelled: () => true }, everyFit(frame, 2, [3]))).toThrow("cancelled");
+    const input = { frame, factor: factorise(frame), targets: [3], kind: "HC3" as const, base: null, passing: {} };
+    expect(() => treeErrors({ ...input, passing: { cancelled: () => true } }, everyFit(frame, 2, [3]))).toThrow("cancelled");
   });
 });
