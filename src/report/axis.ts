@@ -10,7 +10,11 @@ export function axisFor(lines: readonly (Line | null)[]): Axis | null {
   if (ends.length === 0) return null;
   const low = Math.min(0, ...ends);
   const high = Math.max(0, ...ends);
-  if (low === high) return { low: -1, high: 1, ticks: [{ at: 0, text: "0" }] };
+  return low === high ? { low: -1, high: 1, ticks: [{ at: 0, text: "0" }] } : axisAround(low, high);
+}
+
+/** An axis of round ticks that holds two values apart from each other. */
+export function axisAround(low: number, high: number): Axis {
   const step = roundStep((high - low) / TICKS);
   const [first, last] = [Math.floor(low / step + 1e-9), Math.ceil(high / step - 1e-9)];
   const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9));
@@ -18,7 +22,8 @@ export function axisFor(lines: readonly (Line | null)[]): Axis | null {
     at,
     text: fixed(at, decimals),
   }));
-  return { low: first * step, high: last * step, ticks };
+  // + 0 turns −0 into 0
+  return { low: first * step + 0, high: last * step + 0, ticks };
 }
 
 /** 1, 2 or 5 times a power of ten, at least `rough`. */

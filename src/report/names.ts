@@ -27,6 +27,11 @@ export function listed(names: readonly string[], joint: "and" | "or" = "and"): s
   return `${names.slice(0, -1).join(", ")} ${joint} ${names[names.length - 1]}`;
 }
 
+/** What a set holds fixed, as a table's cell or a list's entry: "nothing", "floor_m2, tenure". */
+export function heldName(adjustedFor: readonly string[], plan: Plan): string {
+  return adjustedFor.length === 0 ? "nothing" : adjustedFor.map((column) => columnName(column, plan)).join(", ");
+}
+
 /** "flats", or "rows". */
 export function rowsName(plan: Plan): string {
   return plan.rowsAre ? oneLine(plan.rowsAre) : "rows";

@@ -1,7 +1,7 @@
 import type { Comparison, ContrastResult } from "../engine/comparison";
 import type { Plan } from "../engine/plan";
 import { count, decimalsFor, fixed } from "./digits";
-import { columnName, listed, rowsName } from "./names";
+import { columnName, heldName, listed, rowsName } from "./names";
 import type { Line, ShiftRow } from "./presentation";
 import { scaleOf } from "./scale";
 import type { Scale } from "./scale";
@@ -63,7 +63,7 @@ function shiftRow(
   const set = comparison.sets[index];
   const own = set.contrasts[contrast];
   const { readout } = own;
-  const held = set.adjustedFor.length === 0 ? "nothing" : set.adjustedFor.map((c) => columnName(c, plan)).join(", ");
+  const held = heldName(set.adjustedFor, plan);
   const difference = differenceText(comparison, plan, scale, columns.difference, own);
   const shift = shiftText(scale, columns.shift, own);
   const word = wordOf(own, checking);

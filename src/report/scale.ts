@@ -37,7 +37,24 @@ export function scaleOf(question: Question, plan: Plan): Scale {
   return { show: (v) => v, showError: (e) => e, unit, head: unit ? `${what} (${unit})` : what };
 }
 
+/** How the outcome itself is said, apart from differences in it: in its own unit, percent of a two-valued one. */
+export interface OutcomeScale extends Pick<Scale, "show" | "showError" | "unit"> {
+  /** Drawn on a logarithmic axis, since the models are of the logarithm. */
+  readonly log: boolean;
+}
+
+/** The scale of a question's outcome, from the values the models are fitted to. */
+export function outcomeScaleOf(question: Question, plan: Plan): OutcomeScale {
+  if (question.outcomeForm !== "log") {
+    const { show, showError, unit } = scaleOf(question, plan);
+    return { show, showError, unit: question.outcomeKind === "binary" ? "%" : unit, log: false };
+  }
+  const unit = plan.outcome.unit ? oneLine(plan.outcome.unit) : "";
+  const showError = (error: number | null, near: number) => (error === null ? null : Math.exp(near) * error);
+  return { show: Math.exp, showError, unit, log: true };
+}
+
 /** "212 kWh per winter", "3.1 %", "4.2 percentage points", "212". */
-export function withUnit(number: string, { unit }: Scale): string {
+export function withUnit(number: string, { unit }: Pick<Scale, "unit">): string {
   return unit === "" ? number : `${number} ${unit}`;
 }

@@ -1,4 +1,5 @@
 import type { ContrastColumn, ModifierValues } from "../design/types";
+import { distinctValues } from "../question/columns";
 import { crossingOf, straightOf } from "../slopes/crossing";
 import { levelsOf, rangeOf } from "../slopes/range";
 import { regionsOf } from "../slopes/regions";
@@ -9,6 +10,9 @@ import { evenValues } from "./grid";
 import { groupLines, withValues } from "./lines";
 import { drawnRows } from "./rows";
 import type { AlongFigure, DrawnRows, LevelDifference } from "./types";
+
+/** A modifier of no more values than this is looked at where it has them. */
+const FEW_VALUES = 12;
 
 /** Smallest and largest of some values, and whether there are no others. */
 export interface Ends {
@@ -39,7 +43,9 @@ export function alongFigure(
   const { form } = design.covariates.get(modifier)!.basis;
   const log = form === "log";
   const { shared } = rangeOf(design, values);
-  const grid = evenValues(low, high, log);
+  const even = evenValues(low, high, log);
+  const grid = distinctValues(values, FEW_VALUES) ?? even;
+  const x = withValues(even, grid);
   const groups = byGroup(figure, values);
   const line = straightOf(design, figure, contrast);
   const alone = figure.modifiers.length === 1;
@@ -49,8 +55,8 @@ export function alongFigure(
     range: [low, high],
     shared,
     grid,
-    lines: design.group ? groupLines(figure, grid, groups.map(endsOfGroup)) : [],
-    difference: differenceCurve(figure, contrast, withValues(grid, shared ?? [])),
+    lines: design.group ? groupLines(figure, x, groups.map(endsOfGroup)) : [],
+    difference: differenceCurve(figure, contrast, withValues(x, shared ?? [])),
     crossing: alone && line ? crossingOf(line, modifier, values, level) : null,
     regions: regionsOf(design, figure, contrast, level),
     points: design.group ? rowsAlong(figure, values, lines) : { group: [], x: [], y: [], lines: [], of: 0 },

@@ -7,14 +7,15 @@ import type { GroupLine, Interval } from "./types";
 
 /**
  * Each group's fitted line along the modifier with its interval at the plan's level, each value by itself.
+ * @param x ascending
  * @param rows ends of each group's own rows, by group; null for a group without rows
  */
-export function groupLines(figure: FigureFit, grid: readonly number[], rows: readonly ([number, number] | null)[]): GroupLine[] {
+export function groupLines(figure: FigureFit, x: readonly number[], rows: readonly ([number, number] | null)[]): GroupLine[] {
   const { design } = figure;
   return rows.flatMap((ends, group): GroupLine[] => {
     const contrast = group === 0 ? null : design.contrasts[group - 1];
     if (!ends || (contrast && contrast.column < 0)) return [];
-    const line = lineOf(figure, contrast, withValues(grid, ends));
+    const line = lineOf(figure, contrast, withValues(x, ends));
     return line ? [{ group, rows: ends, ...line }] : [];
   });
 }

@@ -38,7 +38,7 @@ export interface AlongFigure {
   readonly range: readonly [number, number];
   /** Where every group has rows (an amount: the range); null where the groups do not overlap. */
   readonly shared: readonly [number, number] | null;
-  /** The even values hover and tables go through, ascending, both ends of the range among them. */
+  /** Values hover and tables go through, ascending, both ends of the range among them: even ones, or all there are where these are few. */
   readonly grid: readonly number[];
   /** One a group that has rows, the reference first; empty for an amount. */
   readonly lines: readonly GroupLine[];
@@ -63,7 +63,7 @@ export interface GroupLine {
   readonly group: number;
   /** Smallest and largest value of the modifier among the group's rows. */
   readonly rows: readonly [number, number];
-  /** The grid with the ends of `rows`. */
+  /** Even values with the grid and the ends of `rows`. */
   readonly x: readonly number[];
   readonly estimate: readonly number[];
   readonly standardError: readonly (number | null)[];
@@ -72,7 +72,7 @@ export interface GroupLine {
 }
 
 export interface DifferenceCurve {
-  /** The grid with the ends of the shared range. */
+  /** Even values with the grid and the ends of the shared range. */
   readonly x: readonly number[];
   readonly estimate: readonly number[];
   readonly standardError: readonly (number | null)[];

@@ -1,4 +1,5 @@
-import type { Comparison, ContrastResult } from "../../engine/comparison";
+import type { Comparison, ContrastResult, SingleReadout } from "../../engine/comparison";
+import type { Reason } from "../../engine/findings";
 import type { Plan } from "../../engine/plan";
 import type { Sentence } from "../presentation";
 import { word } from "../names";
@@ -27,12 +28,7 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
   const { readout } = contrast;
   switch (readout.kind) {
     case "none":
-      return [
-        {
-          text: `${held}, no ${comparison.question.kind === "groups" ? `difference${contrast.level === null ? "" : ` for ${word(contrast.level)}`}` : "slope"} can be given: ${sayReason(readout.reason, plan)}.`,
-          tone: "headline",
-        },
-      ];
+      return [{ text: sayNone(voice, held, readout.reason), tone: "headline" }];
     case "varies":
       return [
         { text: sayVaries(voice, set, readout.modifiers), tone: "headline" },
@@ -50,13 +46,7 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
     }
     case "single":
     case "undecided": {
-      const decimals = decimalsOf(voice, readout);
-      const sentences: Sentence[] = [
-        {
-          text: `${held}, ${sayEstimate(voice, readout.estimate, decimals)} ${intervalPhrase(voice, readout, decimals)}.`,
-          tone: "headline",
-        },
-      ];
+      const sentences: Sentence[] = [{ text: sayOne(voice, held, readout), tone: "headline" }];
       const base = comparison.sets[0].contrasts[i].readout;
       if (readout.shift && base.kind !== "varies" && base.kind !== "none") {
         const baseHeld = comparison.sets[0].adjustedFor;
@@ -68,6 +58,18 @@ function sayContrast(comparison: Comparison, plan: Plan, setIndex: number, contr
       return sentences;
     }
   }
+}
+
+/** Why a contrast has no number. */
+export function sayNone({ comparison, plan, contrast }: Voice, held: string, reason: Reason): string {
+  const difference = contrast.level === null ? "difference" : `difference for ${word(contrast.level)}`;
+  return `${held}, no ${comparison.question.kind === "groups" ? difference : "slope"} can be given: ${sayReason(reason, plan)}.`;
+}
+
+/** The one estimate of a set that has one. */
+export function sayOne(voice: Voice, held: string, readout: SingleReadout): string {
+  const decimals = decimalsOf(voice, readout);
+  return `${held}, ${sayEstimate(voice, readout.estimate, decimals)} ${intervalPhrase(voice, readout, decimals)}.`;
 }
 
 function sayEstimate(voice: Voice, estimate: number, decimals: number): string {

@@ -1,4 +1,4 @@
-import type { AverageOverRows, Profile, Region, SetResult, SlopesTest, VariesReadout } from "../../engine/comparison";
+import type { AverageOverRows, Crossing, Profile, Region, SetResult, SlopesTest, VariesReadout } from "../../engine/comparison";
 import { count, decimalsFor, exactly, fixed, levelName, percent, pValue, significant } from "../digits";
 import { columnName, listed, rowsName, word } from "../names";
 import { withUnit } from "../scale";
@@ -6,7 +6,7 @@ import { decimalsOf, direction, intervalPhrase, range } from "./difference";
 import type { Voice } from "./difference";
 
 /** What stays open about slopes where one estimate is printed: which modifiers, and how much the data leave open. */
-export function sayUndecided(voice: Voice, set: SetResult): string | null {
+export function sayUndecided(voice: Voice, set: Pick<SetResult, "slopes">): string | null {
   const open = set.slopes.filter((s) => s.verdict === "cannot tell");
   if (open.length === 0) return null;
   const { plan, comparison } = voice;
@@ -25,7 +25,7 @@ export function sayUndecided(voice: Voice, set: SetResult): string | null {
 }
 
 /** "Slopes were shown to agree within 150 kWh in floor_m2." */
-export function sayAgreement(voice: Voice, set: SetResult): string | null {
+export function sayAgreement(voice: Voice, set: Pick<SetResult, "slopes">): string | null {
   const { margin } = voice.comparison.question;
   const agreeing = set.slopes.filter((s) => s.verdict === "agree").map((s) => columnName(s.modifier, voice.plan));
   if (margin === null || agreeing.length === 0 || agreeing.length < set.slopes.length) return null;
@@ -48,11 +48,15 @@ export function sayVaries(
 /** The sentences that stand in place of a number: differences at stated values, the crossing, the regions, what to report. */
 export function sayInstead(voice: Voice, readout: VariesReadout, held: string): string[] {
   const sentences = [sayProfiles(voice, readout, held)];
-  if (readout.crossing) sentences.push(sayCrossing(voice, readout));
-  const surely = sayRegions(voice, readout);
-  if (surely) sentences.push(surely);
+  sentences.push(...sayWhere(voice, readout));
   if (readout.average) sentences.push(sayAverage(voice, readout.average));
   return sentences;
+}
+
+/** Where the difference changes sign and where its sign is known. */
+export function sayWhere(voice: Voice, { crossing, regions }: Pick<VariesReadout, "crossing" | "regions">): string[] {
+  const surely = sayRegions(voice, regions);
+  return [...(crossing ? [sayCrossing(voice, crossing, regions)] : []), ...(surely ? [surely] : [])];
 }
 
 /** What to report, and both ways on. */
@@ -99,9 +103,10 @@ function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): s
   return `${held}, ${who} ${listed([first, ...said.slice(1)])}.`;
 }
 
-function sayCrossing(voice: Voice, { crossing, regions }: VariesReadout): string {
+/** Where the difference changes sign, with how sure that is. */
+function sayCrossing(voice: Voice, crossing: Crossing, regions: readonly Region[]): string {
   const { plan, comparison } = voice;
-  const { modifier, value, interval, below } = crossing!;
+  const { modifier, value, interval, below } = crossing;
   const name = columnName(modifier, plan);
   const range = regions.filter((r) => r.band === "pointwise");
   const [first, last] = [range[0]?.from ?? -Infinity, range[range.length - 1]?.to ?? Infinity];
@@ -119,13 +124,14 @@ function sayCrossing(voice: Voice, { crossing, regions }: VariesReadout): string
   }
 }
 
-function endsOf(low: number | null, high: number | null, joint = "to"): string {
+/** Ends of a crossing's interval, open where they are beyond all numbers. */
+export function endsOf(low: number | null, high: number | null, joint = "to"): string {
   if (low === null) return `up to ${significant(high ?? 0)}`;
   return high === null ? `${significant(low)} and up` : `${significant(low)} ${joint} ${significant(high)}`;
 }
 
 /** Where the sign is known at all values at once (simultaneous bands). */
-function sayRegions(voice: Voice, { regions }: VariesReadout): string | null {
+export function sayRegions(voice: Voice, regions: readonly Region[]): string | null {
   const known = regions.filter((r) => r.band === "simultaneous");
   if (known.length === 0) return null;
   const { plan, comparison } = voice;
@@ -145,11 +151,11 @@ function stretch({ from, to }: Region): string {
 }
 
 /** "wind 1.7", "tenure = owner and floor_m2 60". */
-export function placeName({ plan }: Voice, { where }: Profile): string {
+export function placeName({ plan }: Voice, { where }: Pick<Profile, "where">, digits = 3): string {
   return listed(
     where.map(({ column, value }) =>
       typeof value === "number"
-        ? `${columnName(column, plan)} ${significant(value)}`
+        ? `${columnName(column, plan)} ${significant(value, digits)}`
         : `${columnName(column, plan)} = ${word(value)}`,
     ),
   );
