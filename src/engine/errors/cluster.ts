@@ -1,5 +1,6 @@
 import { EigenvalueDecomposition, Matrix } from "ml-matrix";
-import { ROW_BLOCK, whitenedBlocks } from "../linear/rows";
+import { BLOCK } from "../kernels";
+import { whitenedBlocks } from "../linear/rows";
 import type { Fit, Frame } from "../linear/types";
 import type { Clustered } from "./types";
 
@@ -25,7 +26,7 @@ export function clusterScores(frame: Frame, fit: Fit, e: Float64Array): Clustere
       for (let i = 0; i < height; i++) {
         const row = start + i;
         const root = frame.weights ? Math.sqrt(frame.weights[row]) : 1;
-        scores[codes[row] * p + j] += u[j * ROW_BLOCK + i] * root * e[row];
+        scores[codes[row] * p + j] += u[j * BLOCK + i] * root * e[row];
       }
     }
   });
@@ -110,7 +111,7 @@ function clusterSums(frame: Frame, fit: Fit, e: Float64Array): Sums {
       const w = weights ? weights[row] : 1;
       const root = Math.sqrt(w);
       for (let a = 0; a < p; a++) {
-        const y = u[a * ROW_BLOCK + i] / root;
+        const y = u[a * BLOCK + i] / root;
         k[a] = y;
         if (weights) k[p + a] = w * y;
       }

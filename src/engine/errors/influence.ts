@@ -1,3 +1,4 @@
+import { BLOCK, kernels, loadBlock } from "../kernels";
 import type { Fit, Frame } from "../linear/types";
 import { transposedTimes } from "./quadratic";
 import { LEVERAGE_GAP } from "./robust";
@@ -12,26 +13,55 @@ import type { Covariance } from "./types";
  */
 export function influence(frame: Frame, fit: Fit, cov: Covariance, combination: Float64Array): Float64Array {
   const p = fit.columns.length;
-  const t = transposedTimes(fit.rInverse, combination);
   if (cov.clustered) {
+    const t = transposedTimes(fit.rInverse, combination);
     const { scores, count } = cov.clustered;
     const out = new Float64Array(count);
     for (let j = 0; j < count; j++) for (let a = 0; a < p; a++) out[j] += scores[j * p + a] * t[a];
     return out;
   }
-  // (X'WX)⁻¹-row times x is one combination of the raw columns: no need to whiten them all
-  const out = new Float64Array(frame.n);
-  for (let k = 0; k < p; k++) {
+  const out = combined(frame, fit.columns, rawShares(fit, combination));
+  for (let i = 0; i < out.length; i++) out[i] *= rowFactor(frame, cov, i);
+  return out;
+}
+
+/** (X'WX)⁻¹ times a combination: a row's x times it is one combination of the raw columns, no need to whiten them all. Length p. */
+export function rawShares(fit: Fit, combination: Float64Array): Float64Array {
+  const p = fit.columns.length;
+  const t = transposedTimes(fit.rInverse, combination);
+  return Float64Array.from({ length: p }, (_, k) => {
     let share = 0;
     for (let j = k; j < p; j++) share += fit.rInverse[k * p + j] * t[j];
-    if (share === 0) continue;
-    const x = frame.columns[fit.columns[k]];
-    for (let i = 0; i < out.length; i++) out[i] += share * x[i];
-  }
-  for (let i = 0; i < out.length; i++) {
-    const left = 1 - cov.leverages![i];
-    const w = frame.weights ? frame.weights[i] : 1;
-    out[i] *= (w * cov.residuals[i]) / (left < LEVERAGE_GAP ? 1 : left);
+    return share;
+  });
+}
+
+/** w e/(1 − h) of a row; of leverage 1 without its 1 − h. @param cov with residuals and leverages */
+export function rowFactor(frame: Frame, cov: Covariance, row: number): number {
+  return cov.residuals[row] * leverageFactor(frame, cov, row);
+}
+
+/** w/(1 − h) of a row, as rowFactor takes it. */
+export function leverageFactor(frame: Frame, cov: Covariance, row: number): number {
+  const left = 1 - cov.leverages![row];
+  return (frame.weights ? frame.weights[row] : 1) / (left < LEVERAGE_GAP ? 1 : left);
+}
+
+/** Σ_k shares[k]·columns[k], length n. */
+export function combined(frame: Frame, columns: readonly number[], shares: Float64Array): Float64Array {
+  const out = new Float64Array(frame.n);
+  const k = kernels();
+  const w = k.room(2 * BLOCK);
+  for (let start = 0; start < frame.n; start += BLOCK) {
+    const height = Math.min(BLOCK, frame.n - start);
+    const even = height + (height % 2);
+    w.fill(0, 0, even);
+    columns.forEach((column, j) => {
+      if (shares[j] === 0) return;
+      loadBlock(k, w, BLOCK, frame.columns[column], start, height);
+      k.takeOut(0, 0, BLOCK, -shares[j], even);
+    });
+    out.set(w.subarray(0, height), start);
   }
   return out;
 }

@@ -1,4 +1,5 @@
-import { ROW_BLOCK, whitenedBlocks } from "../linear/rows";
+import { BLOCK, kernels } from "../kernels";
+import { whitenedBlocks } from "../linear/rows";
 import type { Fit, Frame } from "../linear/types";
 import type { Variance } from "../plan";
 
@@ -15,28 +16,25 @@ export const LEVERAGE_GAP = 1e-10;
 export function robustMeat(frame: Frame, fit: Fit, e: Float64Array, h: Float64Array, kind: Variance, from: number): Float64Array {
   const p = fit.columns.length;
   const meat = new Float64Array(p * p);
-  const square = new Float64Array(ROW_BLOCK);
-  whitenedBlocks(frame, fit, (u, start, height) => {
-    square.fill(0);
-    for (let j = 0; j < p; j++) {
-      const at = j * ROW_BLOCK;
-      for (let i = 0; i < height; i++) square[i] += u[at + i] * u[at + i];
-    }
+  const k = kernels();
+  const visit = (u: Float64Array, start: number, height: number, spare: number) => {
+    const even = height + (height % 2);
+    const [square, scaled] = [spare, spare + BLOCK];
+    u.fill(0, square, square + even);
+    for (let j = 0; j < p; j++) k.addLeverage(square, square, j * BLOCK, 1, even);
     for (let i = 0; i < height; i++) {
       const row = start + i;
-      h[row] = square[i] > 1 ? 1 : square[i];
+      h[row] = u[square + i] > 1 ? 1 : u[square + i];
       const left = 1 - h[row] < LEVERAGE_GAP ? 1 : 1 - h[row];
       const w = frame.weights ? frame.weights[row] : 1;
-      square[i] = (w * e[row] * e[row]) / (kind === "HC3" ? left * left : kind === "HC2" ? left : 1);
+      u[square + i] = (w * e[row] * e[row]) / (kind === "HC3" ? left * left : kind === "HC2" ? left : 1);
     }
-    for (let j = from; j < p; j++) {
-      for (let k = from; k <= j; k++) {
-        let sum = 0;
-        for (let i = 0; i < height; i++) sum += u[j * ROW_BLOCK + i] * u[k * ROW_BLOCK + i] * square[i];
-        meat[j * p + k] += sum;
-      }
+    for (let a = from; a < p; a++) {
+      k.multiply(scaled, a * BLOCK, square, even);
+      for (let b = from; b <= a; b++) meat[a * p + b] += k.dot(scaled, b * BLOCK, even);
     }
-  });
-  for (let j = 0; j < p; j++) for (let k = 0; k < j; k++) meat[k * p + j] = meat[j * p + k];
+  };
+  whitenedBlocks(frame, fit, visit, 2);
+  for (let a = 0; a < p; a++) for (let b = 0; b < a; b++) meat[b * p + a] = meat[a * p + b];
   return meat;
 }

@@ -1,10 +1,10 @@
+import { BLOCK, kernels, loadBlock } from "../kernels";
+import type { Kernels } from "../kernels";
 import { inHalves } from "../passes/halves";
 import type { Passing } from "../passes/types";
 import { powerOfTwoNorm } from "./scale";
 import type { Factor, Frame } from "./types";
 
-/** Rows reduced at a time: a block of this height and thirty columns stays in the second-level cache. */
-const BLOCK_ROWS = 256;
 /** Blocks between two looks at the cancel flag. */
 const BLOCKS_A_LOOK = 16;
 
@@ -33,13 +33,20 @@ export function factorise(frame: Frame, passing: Passing = {}): Factor {
   const scale = Float64Array.from(columns, (column) => powerOfTwoNorm(column, weights));
   const [[r], second] = inHalves(n, (from, to) => ({ kind: "factor", columns, scale, weights, from, to }), passing);
   const q = columns.length;
-  // the second triangle's rows are folded in like a block's: column-major, q rows each
-  if (second) {
-    const rows = new Float64Array(q * q);
-    for (let i = 0; i < q; i++) for (let j = i; j < q; j++) rows[j * q + i] = second[0][i * q + j];
-    foldBlock(r, q, rows, q, q);
-  }
+  if (second) foldTriangle(r, second[0], q);
   return { n, size: q - 1, r, scale };
+}
+
+/** Folds another triangle into R: its rows like a block's. */
+function foldTriangle(r: Float64Array, other: Float64Array, q: number): void {
+  const k = kernels();
+  const w = k.room(q * BLOCK);
+  for (let start = 0; start < q; start += BLOCK) {
+    const height = Math.min(BLOCK, q - start);
+    w.fill(0, 0, q * BLOCK);
+    for (let i = 0; i < height; i++) for (let j = start + i; j < q; j++) w[j * BLOCK + i] = other[(start + i) * q + j];
+    foldBlock(k, r, q, height + (height % 2));
+  }
 }
 
 /** Length of the triangle that `factorRows` fills. */
@@ -54,30 +61,31 @@ export function factorRows(
   stop: () => void,
 ): void {
   const q = columns.length;
-  const block = new Float64Array(BLOCK_ROWS * q);
-  const roots = weights ? new Float64Array(BLOCK_ROWS) : null;
-  for (let start = from, count = 0; start < to; start += BLOCK_ROWS, count++) {
+  const k = kernels();
+  const w = k.room(q * BLOCK);
+  for (let start = from, count = 0; start < to; start += BLOCK, count++) {
     if (count % BLOCKS_A_LOOK === 0) stop();
-    const height = Math.min(BLOCK_ROWS, to - start);
-    if (roots) for (let i = 0; i < height; i++) roots[i] = Math.sqrt(weights![start + i]);
+    const height = Math.min(BLOCK, to - start);
     for (let c = 0; c < q; c++) {
-      const source = columns[c];
-      const inverse = scale[c];
-      const at = c * BLOCK_ROWS;
-      if (inverse === 0) block.fill(0, at, at + height);
-      else if (roots) for (let i = 0; i < height; i++) block[at + i] = (source[start + i] / inverse) * roots[i];
-      else for (let i = 0; i < height; i++) block[at + i] = source[start + i] / inverse;
+      const at = c * BLOCK;
+      // a power of two, so that its inverse is exact; below it a subnormal scale would have none
+      const inverse = scale[c] === 0 ? 0 : 1 / scale[c];
+      if (Number.isFinite(inverse)) loadBlock(k, w, at, columns[c], start, height, inverse);
+      else {
+        loadBlock(k, w, at, columns[c], start, height);
+        for (let i = 0; i < height; i++) w[at + i] /= scale[c];
+      }
+      if (weights) for (let i = 0; i < height; i++) w[at + i] *= Math.sqrt(weights[start + i]);
     }
-    foldBlock(r, q, block, BLOCK_ROWS, height);
+    foldBlock(k, r, q, height + (height % 2));
   }
 }
 
-/** Replaces R (row-major q × q, upper) by the R of [R; block]; block is column-major with `stride` rows a column, `height` of them used. */
-export function foldBlock(r: Float64Array, q: number, block: Float64Array, stride: number, height: number): void {
+/** Replaces R (row-major q × q, upper) by the R of [R; block]; column c of the block stands at c·BLOCK of the buffer, `height` rows, an even number. */
+function foldBlock(kernel: Kernels, r: Float64Array, q: number, height: number): void {
   for (let j = 0; j < q; j++) {
-    const at = j * stride;
-    let below = 0;
-    for (let i = 0; i < height; i++) below += block[at + i] * block[at + i];
+    const at = j * BLOCK;
+    const below = kernel.dot(at, at, height);
     if (below === 0) continue;
     const alpha = r[j * q + j];
     const norm = Math.sqrt(alpha * alpha + below);
@@ -87,13 +95,12 @@ export function foldBlock(r: Float64Array, q: number, block: Float64Array, strid
     const factor = -1 / (beta * head);
     r[j * q + j] = beta;
     for (let k = j + 1; k < q; k++) {
-      const other = k * stride;
-      let dot = head * r[j * q + k];
-      for (let i = 0; i < height; i++) dot += block[at + i] * block[other + i];
+      const other = k * BLOCK;
+      const dot = head * r[j * q + k] + kernel.dot(at, other, height);
       if (dot === 0) continue;
       const step = dot * factor;
       r[j * q + k] -= step * head;
-      for (let i = 0; i < height; i++) block[other + i] -= step * block[at + i];
+      kernel.takeOut(other, other, at, step, height);
     }
   }
 }

@@ -1,4 +1,4 @@
-import type { Kernels } from "./kernels";
+import type { Kernels } from "../kernels";
 import type { Finish, Meat, Sums } from "./types";
 
 /** A block of rows where a model's path has been taken out: offsets into `w` of the targets, the outcome and the leverages so far. */

@@ -1,13 +1,10 @@
-import { compiledKernels } from "./compiled";
-import { BLOCK, plainKernels, RESULT } from "./kernels";
-import type { Kernels, Last } from "./kernels";
+import { BLOCK, kernels as usualKernels, loadBlock, RESULT } from "../kernels";
+import type { Kernels, Last } from "../kernels";
 import { finishMany } from "./many";
 import type { Meat, Node, Sums, WalkTask } from "./types";
 
 /** Blocks between two looks at the cancel flag. */
 const BLOCKS_A_LOOK = 8;
-
-let usual: Kernels | undefined;
 
 /** Lengths of the arrays of a walk's sums: meat, shift, gap. */
 export function walkSizes({ program: { models, targets: q } }: WalkTask): number[] {
@@ -25,7 +22,7 @@ export function walkRows(
   task: WalkTask,
   into: readonly Float64Array[],
   stop: () => void,
-  kernels: Kernels = (usual ??= compiledKernels() ?? plainKernels()),
+  kernels: Kernels = usualKernels(),
 ): void {
   const { program, source, meat: kind, from, to } = task;
   const [meat, shift, gap] = into;
@@ -36,11 +33,14 @@ export function walkRows(
   for (let start = from, count = 0; start < to; start += BLOCK, count++) {
     if (count % BLOCKS_A_LOOK === 0) stop();
     const height = Math.min(BLOCK, to - start);
-    if (roots) for (let i = 0; i < height; i++) roots[i] = Math.sqrt(source.weights![start + i]);
-    source.columns.forEach((column, slot) => load(w, slot * BLOCK, column, start, height, 1 / program.scale[slot], roots));
-    w.fill(0, outcome + BLOCK, outcome + 2 * BLOCK);
-    source.base?.forEach((column, a) => load(w, walk.base![a], column, start, height, 1, null));
     const even = height + (height % 2);
+    if (roots) for (let i = 0; i < height; i++) roots[i] = Math.sqrt(source.weights![start + i]);
+    source.columns.forEach((column, slot) => {
+      loadBlock(kernels, w, slot * BLOCK, column, start, height, 1 / program.scale[slot]);
+      if (roots) for (let i = 0; i < height; i++) w[slot * BLOCK + i] *= roots[i];
+    });
+    w.fill(0, outcome + BLOCK, outcome + 2 * BLOCK);
+    source.base?.forEach((column, a) => loadBlock(kernels, w, walk.base![a], column, start, height));
     program.nodes.forEach((node, i) => visit(walk, node, lasts[i], even));
   }
 }
@@ -68,21 +68,6 @@ function layOut({ program, source, meat: kind }: WalkTask, sums: Sums, kernels: 
   const result = room + (q + 3 + (base?.length ?? 0)) * BLOCK;
   const w = kernels.room(result + RESULT);
   return { w, kernels, level, outcome: columns.length * BLOCK, room, base, result, q, kind, sums };
-}
-
-/** A block's rows of a column; the row after an odd number of them is zero. */
-function load(
-  w: Float64Array,
-  at: number,
-  column: Float64Array,
-  start: number,
-  height: number,
-  factor: number,
-  roots: Float64Array | null,
-): void {
-  if (roots) for (let i = 0; i < height; i++) w[at + i] = column[start + i] * factor * roots[i];
-  else for (let i = 0; i < height; i++) w[at + i] = column[start + i] * factor;
-  if (height % 2 === 1) w[at + height] = 0;
 }
 
 /** For a node where a model with one target ends, under HC3; null for others. */

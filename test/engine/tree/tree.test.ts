@@ -8,14 +8,14 @@ import { fitColumns } from "../../../src/engine/linear/fit";
 import type { Fit, Frame } from "../../../src/engine/linear/types";
 import type { Variance } from "../../../src/engine/plan";
 import { treeErrors } from "../../../src/engine/tree";
-import { compiledKernels } from "../../../src/engine/tree/compiled";
-import { plainKernels } from "../../../src/engine/tree/kernels";
+import { compiledKernels } from "../../../src/engine/kernels/compiled";
+import { plainKernels } from "../../../src/engine/kernels/plain";
 import { writeProgram } from "../../../src/engine/tree/program";
 import { walkRows, walkSizes } from "../../../src/engine/tree/rows";
 import { growTree } from "../../../src/engine/tree/trie";
 import { relativeError, TOLERANCE } from "../../tolerances";
 import { seeded } from "../fixtures";
-import { translate } from "./compile.mjs";
+import { translate } from "../kernels/compile.mjs";
 
 const KINDS: readonly Variance[] = ["classical", "HC0", "HC1", "HC2", "HC3"];
 
@@ -45,7 +45,7 @@ const targetsOf = (covariates: number, targets: number) => Array.from({ length: 
 
 describe("the compiled loops", () => {
   it("are kernels.wat, translated", async () => {
-    expect(readFileSync("src/engine/tree/kernels.wasm.ts", "utf8")).toBe(await translate());
+    expect(readFileSync("src/engine/kernels/kernels.wasm.ts", "utf8")).toBe(await translate());
   });
 
   it("give what the plain ones give, whatever the height of the last block", () => {

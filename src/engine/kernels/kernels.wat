@@ -1,5 +1,5 @@
-;; The inner loops of kernels.ts, two rows an instruction. Offsets and heights count doubles; a column is 256 of them (2048 bytes), and a
-;; target's column is followed by the outcome's and the leverages'. Heights are multiples of 2. See kernels.ts for what each does.
+;; The inner loops of types.ts, two rows an instruction. Offsets and heights count doubles; a column is 256 of them (2048 bytes), and a
+;; target's column is followed by the outcome's and the leverages'. Heights are multiples of 2. See types.ts for what each does.
 (module
   (memory (export "memory") 1)
 
@@ -18,6 +18,46 @@
       (local.set $from (i32.add (local.get $from) (i32.const 16)))
       (local.set $x (i32.add (local.get $x) (i32.const 16)))
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
+
+  ;; to = factor·x
+  (func (export "times") (param $to i32) (param $x i32) (param $factor f64) (param $height i32)
+    (local $end i32) (local $s v128)
+    (local.set $to (i32.shl (local.get $to) (i32.const 3)))
+    (local.set $x (i32.shl (local.get $x) (i32.const 3)))
+    (local.set $end (i32.add (local.get $x) (i32.shl (local.get $height) (i32.const 3))))
+    (local.set $s (f64x2.splat (local.get $factor)))
+    (loop $rows
+      (v128.store (local.get $to) (f64x2.mul (local.get $s) (v128.load (local.get $x))))
+      (local.set $to (i32.add (local.get $to) (i32.const 16)))
+      (local.set $x (i32.add (local.get $x) (i32.const 16)))
+      (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
+
+  ;; to = x·y, row by row
+  (func (export "multiply") (param $to i32) (param $x i32) (param $y i32) (param $height i32)
+    (local $end i32)
+    (local.set $to (i32.shl (local.get $to) (i32.const 3)))
+    (local.set $x (i32.shl (local.get $x) (i32.const 3)))
+    (local.set $y (i32.shl (local.get $y) (i32.const 3)))
+    (local.set $end (i32.add (local.get $x) (i32.shl (local.get $height) (i32.const 3))))
+    (loop $rows
+      (v128.store (local.get $to) (f64x2.mul (v128.load (local.get $x)) (v128.load (local.get $y))))
+      (local.set $to (i32.add (local.get $to) (i32.const 16)))
+      (local.set $x (i32.add (local.get $x) (i32.const 16)))
+      (local.set $y (i32.add (local.get $y) (i32.const 16)))
+      (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
+
+  ;; sum of x·y
+  (func (export "dot") (param $x i32) (param $y i32) (param $height i32) (result f64)
+    (local $end i32) (local $sum v128)
+    (local.set $x (i32.shl (local.get $x) (i32.const 3)))
+    (local.set $y (i32.shl (local.get $y) (i32.const 3)))
+    (local.set $end (i32.add (local.get $x) (i32.shl (local.get $height) (i32.const 3))))
+    (loop $rows
+      (local.set $sum (f64x2.add (local.get $sum) (f64x2.mul (v128.load (local.get $x)) (v128.load (local.get $y)))))
+      (local.set $x (i32.add (local.get $x) (i32.const 16)))
+      (local.set $y (i32.add (local.get $y) (i32.const 16)))
+      (br_if $rows (i32.lt_u (local.get $x) (local.get $end))))
+    (f64.add (f64x2.extract_lane 0 (local.get $sum)) (f64x2.extract_lane 1 (local.get $sum))))
 
   ;; to = from + inverse·x²
   (func (export "addLeverage") (param $to i32) (param $from i32) (param $x i32) (param $inverse f64) (param $height i32)

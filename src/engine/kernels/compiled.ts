@@ -1,4 +1,4 @@
-import type { Kernels } from "./kernels";
+import type { Kernels } from "./types";
 import { KERNELS_WASM } from "./kernels.wasm";
 
 /** What kernels.wat exports; every offset and height counts doubles. */
@@ -6,6 +6,9 @@ interface Exports {
   readonly memory: WebAssembly.Memory;
   takeOut(to: number, from: number, x: number, share: number, height: number): void;
   addLeverage(to: number, from: number, x: number, inverse: number, height: number): void;
+  times(to: number, x: number, factor: number, height: number): void;
+  multiply(to: number, x: number, y: number, height: number): void;
+  dot(x: number, y: number, height: number): number;
   leaf(...numbers: number[]): void;
   leafShift(...numbers: number[]): void;
   step(...numbers: number[]): void;
@@ -28,6 +31,9 @@ export function compiledKernels(): Kernels | null {
       return (w = w.byteLength === wasm.memory.buffer.byteLength ? w : new Float64Array(wasm.memory.buffer));
     },
     takeOut: wasm.takeOut,
+    times: wasm.times,
+    multiply: wasm.multiply,
+    dot: wasm.dot,
     addLeverage: wasm.addLeverage,
     leaf: (x, from, { inverseX, shareTarget, shareOutcome, share, inverse }, height, result) =>
       wasm.leaf(x, from, inverseX, shareTarget, shareOutcome, share, inverse, height, result),
