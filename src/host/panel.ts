@@ -111,6 +111,8 @@ export class ComparisonPanel {
         return openLine(message.inPlan ? this.targetPath : this.subject.csv, message.line);
       case "readAgain":
         return this.subject.readAgain();
+      case "slopes":
+        return this.subject.showSlopes(message.choice);
     }
   }
 

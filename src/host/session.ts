@@ -3,8 +3,10 @@ import type { PanelState, PlanChange, QuestionState, Reading, SetFilter } from "
 import type { Presentation } from "../report/presentation";
 import { askOf } from "./ask";
 import { settlesGuess } from "./choose";
+import { Held } from "./held";
 import { GRACE_MS } from "./quiet";
 import type { Chosen, PlanText, SessionParts } from "./sessionParts";
+import { OpenSlopes } from "./slopes";
 import { statusOf } from "./status";
 import type { Trouble } from "./status";
 import type { Run } from "./worker/client";
@@ -40,11 +42,14 @@ export class Session {
   private gate: { readonly stamp: Stamp; readonly open: () => void } | null = null;
   /** Until the first result: a remembered question may still give way. */
   private fresh = true;
-  private held: NodeJS.Timeout | null = null;
+  private readonly held: Held;
   private planText: PlanText | null;
   private chosen: Chosen | null;
+  readonly slopes: OpenSlopes;
 
   constructor(private readonly parts: SessionParts) {
+    this.held = new Held(parts);
+    this.slopes = new OpenSlopes(parts, () => this.lost());
     this.planText = parts.planText;
     this.chosen = parts.chosen;
   }
@@ -55,7 +60,7 @@ export class Session {
       file: csv.file,
       target,
       status: statusOf({
-        stirring: this.stirring || this.run !== null || this.held !== null,
+        stirring: this.stirring || this.run !== null || this.held.waiting,
         missing: this.missing ? this.parts.missingText(csv.file) : null,
         trouble: this.trouble,
         hasResult: this.presentation !== null,
@@ -66,7 +71,7 @@ export class Session {
       checking: this.checking,
       reading: this.reading,
       filter: this.filter,
-      slopes: null,
+      slopes: this.slopes.section,
     };
   }
 
@@ -74,7 +79,7 @@ export class Session {
 
   fileStirs(): void {
     if (this.gate) this.stop();
-    this.release();
+    this.held.release();
     this.stirring = true;
     this.parts.changed();
   }
@@ -99,6 +104,7 @@ export class Session {
     }
     if (stamp === null) {
       this.stop();
+      this.slopes.resume();
       this.parts.changed();
     } else this.start(true);
   }
@@ -148,19 +154,28 @@ export class Session {
     const { compute, target } = this.parts;
     const text = await compute.copy(target, as, date);
     if (text !== null || this.missing) return text;
-    // the thread that held the comparison was replaced: compare once more
-    this.shown = null;
-    this.start(false);
-    await this.run?.outcome;
+    await this.again();
     return compute.copy(target, as, date);
   }
 
   dispose(): void {
     this.stop();
+    this.slopes.pause();
     this.parts.compute.forget(this.parts.target);
   }
 
   // — runs —
+
+  /** The thread that held the comparison was replaced: compare once more. */
+  private again(): Promise<unknown> {
+    this.shown = null;
+    this.start(false);
+    return this.run!.outcome;
+  }
+
+  private lost(): void {
+    if (!this.run && !this.held.waiting && !this.stirring && !this.missing) void this.again();
+  }
 
   /** The question changed: compare now, or when the file has settled. */
   private compareAnew(reread: boolean): void {
@@ -191,10 +206,11 @@ export class Session {
             this.parts.changed();
           }),
         preview: (result) =>
-          void opened.then(() => live(() => this.hold(result.stamp, this.doubt(result), () => this.show(result, true)))),
+          void opened.then(() => live(() => this.held.until(result.stamp, this.doubt(result), () => this.show(result, true)))),
       },
     );
     this.run = run;
+    this.slopes.pause();
     this.parts.changed();
     void Promise.all([run.outcome, opened]).then(([outcome]) => live(() => this.finished(outcome, filter)));
   }
@@ -202,9 +218,10 @@ export class Session {
   private finished(outcome: Outcome, filter: SetFilter): void {
     this.run = null;
     this.lastStamp = stampIn(outcome);
+    if (outcome.kind !== "compared") this.slopes.resume();
     switch (outcome.kind) {
       case "compared":
-        this.hold(outcome.result.stamp, this.doubt(outcome.result), () => {
+        this.held.until(outcome.result.stamp, this.doubt(outcome.result), () => {
           this.show(outcome.result, false);
           if (filter !== this.filter) void this.setFilter(this.filter);
         });
@@ -215,7 +232,7 @@ export class Session {
         this.parts.log("unchanged bytes");
         break;
       case "problem":
-        this.hold(outcome.stamp, GRACE_MS, () => this.refuse(outcome));
+        this.held.until(outcome.stamp, GRACE_MS, () => this.refuse(outcome));
         break;
       case "failed":
         this.parts.log(outcome.detail);
@@ -230,23 +247,6 @@ export class Session {
         break;
     }
     this.parts.changed();
-  }
-
-  /** Acts once the file has stood still, in the state it was read, for `quiet` ms; not at all if it changes first. */
-  private hold(stamp: Stamp | null, quiet: number, act: () => void): void {
-    this.release();
-    const { followed } = this.parts;
-    const left = quiet - followed.quiet();
-    // a file that changed meanwhile will settle and start another run
-    if (left <= 0) {
-      if (stamp === null || followed.stands(stamp)) act();
-      return;
-    }
-    this.held = setTimeout(() => {
-      this.held = null;
-      if (stamp === null || followed.stands(stamp)) act();
-      this.parts.changed();
-    }, left);
   }
 
   /** How long to wait before a result is believed: a file that used to end with a line break and does not now is likely cut short. */
@@ -264,6 +264,7 @@ export class Session {
     if (this.chosen || !this.planText) this.chosen = { plan: result.question.plan, guessed: result.guessed };
     this.checking = checking;
     this.trouble = null;
+    this.slopes.renew(checking ? null : result.run);
     if (!checking) {
       this.fresh = false;
       this.shown = { sha256: result.sha256, ended: result.ended };
@@ -283,15 +284,10 @@ export class Session {
   }
 
   private stop(): void {
-    this.release();
+    this.held.release();
     this.gate = null;
     const run = this.run;
     this.run = null;
     run?.cancel();
-  }
-
-  private release(): void {
-    if (this.held) clearTimeout(this.held);
-    this.held = null;
   }
 }

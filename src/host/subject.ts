@@ -2,7 +2,7 @@ import { readFile } from "node:fs/promises";
 import { basename } from "node:path";
 import type { Problem } from "../engine/findings";
 import { parsePlan } from "../plan/parse";
-import type { PanelState, PlanChange } from "../protocol";
+import type { PanelState, PlanChange, SlopesChoice } from "../protocol";
 import { sayProblem } from "../report/wording/problem";
 import { Follow } from "./follow";
 import { GRACE_MS } from "./quiet";
@@ -42,6 +42,7 @@ export class Subject {
   private planTrouble: { readonly text: string; readonly line: number | null } | null = null;
   private planText: PlanText | null = null;
   private held: NodeJS.Timeout | null = null;
+  private slopes: SlopesChoice | null = null;
   private disposed = false;
 
   constructor(private readonly parts: SubjectParts) {
@@ -67,6 +68,12 @@ export class Subject {
     if (!this.session) return;
     this.planTrouble = null;
     this.session.choose(change);
+  }
+
+  /** The Slopes section as the page wants it, whatever file is followed. */
+  showSlopes(choice: SlopesChoice | null): void {
+    this.slopes = choice;
+    this.session?.slopes.choose(choice);
   }
 
   readAgain(): void {
@@ -152,6 +159,7 @@ export class Subject {
       missingText: (file) => sayProblem({ code: "file-missing", file }),
       log: (text) => parts.log(`${basename(csv)}: ${text}`),
     });
+    if (this.slopes) session.slopes.choose(this.slopes);
     const follow = new Follow(csv, {
       stirring: () => session.fileStirs(),
       likely: (stamp) => session.fileLikely(stamp),

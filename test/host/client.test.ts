@@ -10,6 +10,11 @@ const SCRIPT = `
 const { parentPort, threadId } = require("node:worker_threads");
 parentPort.on("message", (m) => {
   if (m.type === "copy") return parentPort.postMessage({ type: "text", id: m.id, text: m.as + " " + m.date });
+  if (m.type === "slopes") {
+    if (m.session === "dies") process.exit(3);
+    const section = m.session === "draws" ? { set: m.of } : null;
+    return parentPort.postMessage({ type: "slopes", id: m.id, section, detail: m.session === "fails" ? "the stack" : null });
+  }
   if (m.type !== "compare") return;
   const flag = new Int32Array(m.cancel);
   if (m.file === "dies") process.exit(3);
@@ -76,6 +81,14 @@ describe("the host's end of the worker thread", () => {
     const after = await behind.outcome;
     expect(after.kind === "failed" && after.detail).not.toBe(first);
     expect(said.length).toBe(1);
+  });
+  test("a figure is answered, a fault in one goes to the log, and a thread that dies leaves none", async () => {
+    const choice = { set: null, modifier: null, contrast: null };
+    expect(await client.slopes("draws", 7, choice).section).toEqual({ set: 7 });
+    expect(await client.slopes("fails", 7, choice).section).toBeNull();
+    expect(said).toEqual(["the stack"]);
+    expect(await client.slopes("dies", 7, choice).section).toBeNull();
+    expect(await thread()).toMatch(/^\d+$/);
   });
   test("a thread that dies fails its runs in words, and the next run gets a new thread", async () => {
     const outcome = await client.compare(order("dies"), none).outcome;

@@ -1,10 +1,10 @@
 import type { Plan } from "../../src/engine/plan";
 import { Session } from "../../src/host/session";
 import type { Chosen, PlanText } from "../../src/host/sessionParts";
-import type { Order, RunHooks } from "../../src/host/worker/client";
+import type { Figure, Order, RunHooks } from "../../src/host/worker/client";
 import type { Compared, Outcome, Stamp } from "../../src/host/worker/messages";
 import { sameStamp } from "../../src/host/worker/stamp";
-import type { QuestionState } from "../../src/protocol";
+import type { QuestionState, SlopesChoice, SlopesSection } from "../../src/protocol";
 import type { Presentation } from "../../src/report/presentation";
 
 export interface FakeRun {
@@ -41,6 +41,7 @@ export const question = (asked: Plan, guessed: boolean): QuestionState => ({
 export const compared = (title: string, at: Stamp, more: Partial<Compared> = {}): Outcome => ({
   kind: "compared",
   result: {
+    run: at.size,
     presentation: presentation(title),
     question: question(plan, true),
     guessed: true,
@@ -60,9 +61,30 @@ export const refused = (text: string, at: Stamp | null): Outcome => ({
   stamp: at,
 });
 
+/** A Slopes section that was asked for. */
+export interface FakeFigure {
+  /** Size of the file whose comparison it is about. */
+  readonly of: number;
+  readonly choice: SlopesChoice;
+  readonly end: (section: SlopesSection | null) => void;
+  cancelled: boolean;
+}
+
+export const section = (sentence: string): SlopesSection => ({
+  sets: [],
+  set: 0,
+  modifiers: [],
+  modifier: "",
+  contrasts: [],
+  contrast: 0,
+  sentences: [sentence],
+  plots: [],
+});
+
 /** A session whose file, clock and worker are played by the test. */
 export class Stage {
   readonly runs: FakeRun[] = [];
+  readonly figures: FakeFigure[] = [];
   readonly remembered: Chosen[] = [];
   /** The file as it stands; null while it is changing or gone. */
   now: Stamp | null = null;
@@ -79,6 +101,7 @@ export class Stage {
         compare: (order, hooks) => this.begin(order, hooks),
         present: () => Promise.resolve(presentation("filtered")),
         copy: (_session, as) => Promise.resolve(as),
+        slopes: (_session, of, choice) => this.figure(of, choice),
         forget: () => undefined,
       },
       followed: {
@@ -108,6 +131,15 @@ export class Stage {
     for (let i = 0; i < 5; i++) await Promise.resolve();
   }
 
+  async draw(sentence: string | null, figure = this.figures.at(-1)!): Promise<void> {
+    figure.end(sentence === null ? null : section(sentence));
+    for (let i = 0; i < 5; i++) await Promise.resolve();
+  }
+
+  get drawn(): string | null {
+    return this.session.state().slopes?.sentences[0] ?? null;
+  }
+
   get last(): FakeRun {
     return this.runs.at(-1)!;
   }
@@ -118,6 +150,14 @@ export class Stage {
 
   get status(): string {
     return this.session.state().status.kind;
+  }
+
+  private figure(of: number, choice: SlopesChoice): Figure {
+    let end: FakeFigure["end"] = () => undefined;
+    const answer = new Promise<SlopesSection | null>((resolve) => (end = resolve));
+    const figure: FakeFigure = { of, choice, end, cancelled: false };
+    this.figures.push(figure);
+    return { section: answer, cancel: () => void (figure.cancelled = true) };
   }
 
   private begin(order: Order, hooks: RunHooks): { outcome: Promise<Outcome>; cancel: () => void } {

@@ -1,5 +1,5 @@
 import { Worker } from "node:worker_threads";
-import type { SetFilter } from "../../protocol";
+import type { SetFilter, SlopesChoice, SlopesSection } from "../../protocol";
 import type { Presentation } from "../../report/presentation";
 import type { Compared, CompareRequest, FromWorker, Outcome, ToWorker } from "./messages";
 
@@ -18,11 +18,19 @@ export interface Run {
   cancel(): void;
 }
 
+/** A Slopes section on its way; null where the comparison it is about is not held any more, or it was cancelled. */
+export interface Figure {
+  readonly section: Promise<SlopesSection | null>;
+  cancel(): void;
+}
+
 /** What a session needs of the worker; tests put their own in its place. */
 export interface Compute {
   compare(order: Order, hooks: RunHooks): Run;
   present(session: string, filter: SetFilter): Promise<Presentation | null>;
   copy(session: string, as: "markdown" | "table", date: string): Promise<string | null>;
+  /** @param of number of the run whose comparison is asked about */
+  slopes(session: string, of: number, choice: SlopesChoice): Figure;
   forget(session: string): void;
 }
 
@@ -49,29 +57,38 @@ export class WorkerClient implements Compute {
   ) {}
 
   compare(order: Order, hooks: RunHooks): Run {
-    const cancel = new SharedArrayBuffer(4);
-    const flag = new Int32Array(cancel);
     const id = this.next++;
-    let over = false;
+    const stopper = this.stopperOf(id);
+    const { cancel } = stopper;
     const outcome = new Promise<Outcome>((resolve) => {
       this.ask({
         message: { type: "compare", id, cancel, ...order },
         hooks,
         settle: (reply) => {
-          over = true;
           if (reply.type === "done") resolve(reply.outcome);
-          else if (Atomics.load(flag, 0) !== 0) resolve({ kind: "cancelled" });
+          else if (isCancelled(cancel)) resolve({ kind: "cancelled" });
           else
             resolve({ kind: "failed", text: this.lost(order.file), detail: reply.type === "lost" ? reply.detail : reply.type });
         },
       });
     });
-    const stop = () => {
-      if (over || Atomics.load(flag, 0) !== 0) return;
-      Atomics.store(flag, 0, 1);
-      this.endIfSilent(id, () => over);
-    };
-    return { outcome, cancel: stop };
+    return { outcome, cancel: stopper.stop };
+  }
+
+  slopes(session: string, of: number, choice: SlopesChoice): Figure {
+    const id = this.next++;
+    const { cancel, stop } = this.stopperOf(id);
+    const section = new Promise<SlopesSection | null>((resolve) => {
+      this.ask({
+        message: { type: "slopes", id, session, of, choice, cancel },
+        hooks: null,
+        settle: (reply) => {
+          if (reply.type === "slopes" && reply.detail !== null) this.log(reply.detail);
+          resolve(reply.type === "slopes" ? reply.section : null);
+        },
+      });
+    });
+    return { section, cancel: stop };
   }
 
   present(session: string, filter: SetFilter): Promise<Presentation | null> {
@@ -102,12 +119,23 @@ export class WorkerClient implements Compute {
     this.drop("the window closes");
   }
 
+  /** The flag a request is stopped by, and what raises it. */
+  private stopperOf(id: number): { readonly cancel: SharedArrayBuffer; readonly stop: () => void } {
+    const cancel = new SharedArrayBuffer(4);
+    const stop = () => {
+      if (!this.waiting.has(id) || isCancelled(cancel)) return;
+      Atomics.store(new Int32Array(cancel), 0, 1);
+      this.endIfSilent(id);
+    };
+    return { cancel, stop };
+  }
+
   /** Answers come in order: a cancelled run that is not the first waiting has not begun, and gives up at once when it does. */
-  private endIfSilent(id: number, over: () => boolean): void {
+  private endIfSilent(id: number): void {
     setTimeout(() => {
-      if (over()) return;
+      if (!this.waiting.has(id)) return;
       if (this.waiting.keys().next().value === id) this.replace("a cancelled run did not stop");
-      else this.endIfSilent(id, over);
+      else this.endIfSilent(id);
     }, SILENCE_MS).unref();
   }
 

@@ -17,9 +17,13 @@ import type { Readings, TableRead } from "./readings";
 
 /** A comparison the worker keeps, to present other rows of it or to write it out. */
 export interface KeptComparison {
+  /** Number of the run that made it. */
+  readonly run: number;
   readonly comparison: Comparison;
   readonly plan: Plan;
   readonly guessed: boolean;
+  /** The missing marks its columns were read with. */
+  readonly missing: Plan["missing"];
 }
 
 export interface Hooks {
@@ -56,6 +60,7 @@ export function runCompare(request: CompareRequest, readings: Readings, hooks: H
   if (problem) return refuse(problem, questionState(table, plan, guessed, null), read.stamp, inPlan(problem, request));
 
   const result = (comparison: Comparison, checking: boolean): Compared => ({
+    run: request.id,
     presentation: present(comparison, plan, { guessed, checking, filter: request.filter }),
     question: questionState(table, plan, guessed, comparison),
     guessed,
@@ -70,7 +75,7 @@ export function runCompare(request: CompareRequest, readings: Readings, hooks: H
   };
   const passing = { cancelled, preview, ...hooks.second.passing(table.rows) };
   return finish(read, plan, passing, (comparison) => {
-    hooks.keep({ comparison, plan, guessed });
+    hooks.keep({ run: request.id, comparison, plan, guessed, missing });
     return result(comparison, false);
   });
 }

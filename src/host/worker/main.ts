@@ -1,5 +1,7 @@
 import { join } from "node:path";
 import { parentPort } from "node:worker_threads";
+import { Cancelled } from "../../engine/cancelled";
+import type { SlopesSection } from "../../protocol";
 import { present } from "../../report/present";
 import { toMarkdown } from "../../report/markdown";
 import { toTabSeparated } from "../../report/table";
@@ -7,8 +9,9 @@ import { sayProblem } from "../../report/wording/problem";
 import { SecondThread } from "../../threads/second";
 import { runCompare } from "./compare";
 import type { KeptComparison } from "./compare";
-import type { CompareRequest, FromWorker, Outcome, ToWorker } from "./messages";
+import type { CompareRequest, FromWorker, Outcome, SlopesRequest, ToWorker } from "./messages";
 import { Readings } from "./readings";
+import { runSlopes } from "./slopes";
 
 /** The worker thread: holds files, columns and comparisons between saves; only what is shown crosses to the host. */
 const port = parentPort!;
@@ -32,6 +35,9 @@ port.on("message", (message: ToWorker) => {
     case "copy":
       send({ type: "text", id: message.id, text: write(message.session, message.as, message.date) });
       break;
+    case "slopes":
+      send({ type: "slopes", id: message.id, ...slopes(message) });
+      break;
     case "forget":
       forget(message.session);
       break;
@@ -51,9 +57,17 @@ function guarded(request: CompareRequest): Outcome {
       keep: (comparison) => kept.set(request.session, comparison),
     });
   } catch (error) {
-    const detail = error instanceof Error ? (error.stack ?? error.message) : String(error);
+    const detail = stackOf(error);
     const reason = error instanceof RangeError ? "it does not fit in memory" : "the comparison failed; the log names the fault";
     return { kind: "failed", text: sayProblem({ code: "file-unreadable", file: request.file, detail: reason }), detail };
+  }
+}
+
+function slopes(request: SlopesRequest): { section: SlopesSection | null; detail: string | null } {
+  try {
+    return { section: runSlopes(request, kept.get(request.session), pathOf.get(request.session), readings), detail: null };
+  } catch (error) {
+    return { section: null, detail: error instanceof Cancelled ? null : stackOf(error) };
   }
 }
 
@@ -62,6 +76,10 @@ function write(session: string, as: "markdown" | "table", date: string): string 
   if (!held) return null;
   const presentation = present(held.comparison, held.plan, { guessed: held.guessed });
   return as === "markdown" ? toMarkdown(presentation, held.comparison, { date }) : toTabSeparated(presentation);
+}
+
+function stackOf(error: unknown): string {
+  return error instanceof Error ? (error.stack ?? error.message) : String(error);
 }
 
 function forget(session: string): void {

@@ -1,5 +1,5 @@
 import type { Plan } from "../../engine/plan";
-import type { QuestionState, SetFilter } from "../../protocol";
+import type { QuestionState, SetFilter, SlopesChoice, SlopesSection } from "../../protocol";
 import type { Presentation } from "../../report/presentation";
 
 /** What `stat` says about a file, as far as two equal stamps mean the same bytes. */
@@ -37,8 +37,20 @@ export interface CompareRequest {
   readonly known: string | null;
 }
 
+export interface SlopesRequest {
+  readonly type: "slopes";
+  readonly id: number;
+  readonly session: string;
+  /** The comparison it is about, by the number of its run. */
+  readonly of: number;
+  readonly choice: SlopesChoice;
+  /** One Int32: not 0 asks it to stop. */
+  readonly cancel: SharedArrayBuffer;
+}
+
 export type ToWorker =
   | CompareRequest
+  | SlopesRequest
   /** Other rows of the kept comparison. */
   | { readonly type: "present"; readonly id: number; readonly session: string; readonly filter: SetFilter }
   | {
@@ -52,6 +64,8 @@ export type ToWorker =
 
 /** One finished (or provisional) comparison, ready for the page. */
 export interface Compared {
+  /** Number of the run that made it, for later questions about it. */
+  readonly run: number;
   readonly presentation: Presentation;
   readonly question: QuestionState;
   readonly guessed: boolean;
@@ -89,4 +103,6 @@ export type FromWorker =
   | { readonly type: "done"; readonly id: number; readonly outcome: Outcome }
   /** Answer to `present` and `copy`; null where nothing is kept for that session. */
   | { readonly type: "presented"; readonly id: number; readonly presentation: Presentation | null }
-  | { readonly type: "text"; readonly id: number; readonly text: string | null };
+  | { readonly type: "text"; readonly id: number; readonly text: string | null }
+  /** Null where that comparison is not kept any more, or the work was cancelled or failed; `detail` is a fault for the log. */
+  | { readonly type: "slopes"; readonly id: number; readonly section: SlopesSection | null; readonly detail: string | null };

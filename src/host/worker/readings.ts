@@ -42,7 +42,7 @@ export class Readings {
    */
   table(path: string, file: string, missing: Plan["missing"], known: string | null, reread: boolean): TableRead {
     const kept = this.entry(path);
-    const marks = JSON.stringify(missing ?? null);
+    const marks = marksOf(missing);
     const held = kept.tables.get(marks);
     if (!reread && held && kept.stamp) return { kind: "table", table: held, stamp: kept.stamp, ended: kept.ended };
 
@@ -75,6 +75,12 @@ export class Readings {
     return memory;
   }
 
+  /** Columns of the last read, if they are those of these bytes under these marks. */
+  held(path: string, missing: Plan["missing"], sha256: string): Table | null {
+    const table = this.kept.get(path)?.tables.get(marksOf(missing));
+    return table?.source.sha256 === sha256 ? table : null;
+  }
+
   forget(path: string): void {
     this.kept.delete(path);
   }
@@ -87,6 +93,10 @@ export class Readings {
     }
     return kept;
   }
+}
+
+function marksOf(missing: Plan["missing"]): string {
+  return JSON.stringify(missing ?? null);
 }
 
 function sha256(bytes: Uint8Array): string {
