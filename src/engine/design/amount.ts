@@ -41,15 +41,30 @@ interface Start {
 
 /** Mean and a power of two near the standard deviation, free of overflow. */
 export function centring(values: Float64Array): { centre: number; scale: number } {
-  const n = Math.max(1, values.length);
-  let centre = 0;
-  for (const value of values) centre += value / n;
+  const n = values.length;
   let largest = 0;
-  for (const value of values) largest = Math.max(largest, Math.abs(value - centre));
-  if (!(largest > 0) || !Number.isFinite(largest)) return { centre: values.length > 0 ? values[0] : 0, scale: 1 };
+  for (let i = 0; i < n; i++) {
+    const size = Math.abs(values[i]);
+    if (size > largest) largest = size;
+  }
+  const whole = largest > 0 ? powerOfTwo(largest) : 1;
   let sum = 0;
-  for (const value of values) sum += ((value - centre) / largest) ** 2;
-  return { centre, scale: powerOfTwo(largest * Math.sqrt(sum / n)) };
+  // a power of two: dividing by it is exact
+  for (let i = 0; i < n; i++) sum += values[i] / whole;
+  const centre = n > 0 ? (sum / n) * whole : 0;
+  largest = 0;
+  for (let i = 0; i < n; i++) {
+    const size = Math.abs(values[i] - centre);
+    if (size > largest) largest = size;
+  }
+  if (!(largest > 0) || !Number.isFinite(largest)) return { centre: n > 0 ? values[0] : 0, scale: 1 };
+  const unit = powerOfTwo(largest);
+  let squares = 0;
+  for (let i = 0; i < n; i++) {
+    const value = (values[i] - centre) / unit;
+    squares += value * value;
+  }
+  return { centre, scale: powerOfTwo(unit * Math.sqrt(squares / n)) };
 }
 
 /** Powers made orthogonal over the rows by the three-term recurrence (Forsythe 1957). */

@@ -30,9 +30,10 @@ export function buildDesign(
   const columns: Float64Array[] = [take().fill(1)];
   const add = (values: Float64Array): number => columns.push(values) - 1;
   const blocks = new Map<string, Block>();
+  const scratch = take();
   for (const name of new Set([...covariates, ...modifiers])) {
     const source = resolved.sources.get(name)!;
-    const basis = covariateBasis(source, rows);
+    const basis = covariateBasis(source, rows, scratch);
     blocks.set(name, { basis, columns: basisColumns(basis, source, rows, take).map(add) });
   }
   const { exposure, contrasts, group } = exposureBlock(resolved, rows, take, add);
@@ -62,12 +63,14 @@ export function buildDesign(
 export function countGroups(design: Design): Question["groups"] {
   if (!design.group) return [];
   const counts = new Array<number>(design.group.levels.length).fill(0);
-  for (const code of design.group.codes) counts[code]++;
+  const { codes } = design.group;
+  for (let i = 0; i < codes.length; i++) counts[codes[i]]++;
   return design.group.levels.map((level, i) => ({ level, rows: counts[i] }));
 }
 
-function covariateBasis(source: Source, rows: Int32Array): Basis {
-  if (source.kind === "amount") return amountBasis(source.column, source.form, gather(source.values, rows));
+/** @param scratch room for the values, which the basis does not keep */
+function covariateBasis(source: Source, rows: Int32Array, scratch: Float64Array): Basis {
+  if (source.kind === "amount") return amountBasis(source.column, source.form, gather(source.values, rows, scratch));
   return categoryBasis(source.column, source.groups, gatherCodes(source.groups.codes, rows), source.reference);
 }
 
@@ -118,7 +121,7 @@ function exposureBlock(resolved: Resolved, rows: Int32Array, take: Take, add: (v
   const codes = gatherCodes(groups.codes, rows);
   for (let i = 0; i < codes.length; i++) codes[i] = place[codes[i]];
   const counts = new Array<number>(order.length).fill(0);
-  for (const code of codes) counts[code]++;
+  for (let i = 0; i < codes.length; i++) counts[codes[i]]++;
   const basis = categoryBasis(exposure.column, groups, gatherCodes(groups.codes, rows), reference);
   const contrasts: ContrastColumn[] = [];
   const placed: number[] = [];

@@ -20,10 +20,10 @@ type Named = Exclude<Term, { role: "intercept" }>;
  */
 export function modelRows(design: Design, fit: Fit, matrix: Float64Array | null, modifiers: readonly string[]): ModelRow[] {
   const place = new Map(fit.columns.map((column, at) => [column, at]));
-  const rows = new Map<string, { term: Term; combination: Float64Array }>();
-  const add = (term: Term, at: number, share: number) => {
+  // a basis hands out one object a term, so that terms are known by identity; products are known by their text
+  const rows = new Map<Term | string, { term: Term; combination: Float64Array }>();
+  const add = (term: Term, at: number, share: number, key: Term | string = term) => {
     if (share === 0) return;
-    const key = JSON.stringify(term);
     let row = rows.get(key);
     if (!row) rows.set(key, (row = { term, combination: new Float64Array(fit.columns.length) }));
     row.combination[at] += share;
@@ -47,8 +47,10 @@ export function modelRows(design: Design, fit: Fit, matrix: Float64Array | null,
         if (at === undefined) return;
         for (const x of expand(design.exposure.basis, g)) {
           for (const z of expand(other, k)) {
-            const term: Term = x.term && z.term ? { ...x.term, times: z.term } : (x.term ?? z.term ?? intercept);
-            add(term, at, x.share * z.share);
+            const share = x.share * z.share;
+            const product: Term | null = x.term && z.term ? { ...x.term, times: z.term } : null;
+            if (product) add(product, at, share, JSON.stringify(product));
+            else add(x.term ?? z.term ?? intercept, at, share);
           }
         }
       });

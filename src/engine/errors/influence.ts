@@ -9,9 +9,10 @@ import type { Covariance } from "./types";
  * leverage 1 without its 1 − h); per cluster for CR1 (raw scores) and CR2 (adjusted scores). Σψ² is the variance that the shift's interval
  * rests on (CR1: times clusterFactor).
  * @param combination length p, aligned with fit.columns
+ * @param into length n, to use instead of a fresh array for rows
  * @returns length n, or the number of clusters
  */
-export function influence(frame: Frame, fit: Fit, cov: Covariance, combination: Float64Array): Float64Array {
+export function influence(frame: Frame, fit: Fit, cov: Covariance, combination: Float64Array, into?: Float64Array): Float64Array {
   const p = fit.columns.length;
   if (cov.clustered) {
     const t = transposedTimes(fit.rInverse, combination);
@@ -20,7 +21,8 @@ export function influence(frame: Frame, fit: Fit, cov: Covariance, combination: 
     for (let j = 0; j < count; j++) for (let a = 0; a < p; a++) out[j] += scores[j * p + a] * t[a];
     return out;
   }
-  const out = combined(frame, fit.columns, rawShares(fit, combination));
+  const out = into ?? new Float64Array(frame.n);
+  combineInto(out, frame, fit.columns, rawShares(fit, combination));
   for (let i = 0; i < out.length; i++) out[i] *= rowFactor(frame, cov, i);
   return out;
 }
@@ -47,9 +49,8 @@ export function leverageFactor(frame: Frame, cov: Covariance, row: number): numb
   return (frame.weights ? frame.weights[row] : 1) / (left < LEVERAGE_GAP ? 1 : left);
 }
 
-/** Σ_k shares[k]·columns[k], length n. */
-export function combined(frame: Frame, columns: readonly number[], shares: Float64Array): Float64Array {
-  const out = new Float64Array(frame.n);
+/** out = Σ_k shares[k]·columns[k], length n. */
+function combineInto(out: Float64Array, frame: Frame, columns: readonly number[], shares: Float64Array): void {
   const k = kernels();
   const w = k.room(2 * BLOCK);
   for (let start = 0; start < frame.n; start += BLOCK) {
@@ -63,5 +64,4 @@ export function combined(frame: Frame, columns: readonly number[], shares: Float
     });
     out.set(w.subarray(0, height), start);
   }
-  return out;
 }

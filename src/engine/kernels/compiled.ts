@@ -9,10 +9,7 @@ interface Exports {
   times(to: number, x: number, factor: number, height: number): void;
   multiply(to: number, x: number, y: number, height: number): void;
   dot(x: number, y: number, height: number): number;
-  leaf(...numbers: number[]): void;
-  leafShift(...numbers: number[]): void;
-  step(...numbers: number[]): void;
-  stepShift(...numbers: number[]): void;
+  run(at: number, end: number, height: number): void;
 }
 
 const PAGE_BYTES = 65536;
@@ -35,14 +32,7 @@ export function compiledKernels(): Kernels | null {
     multiply: wasm.multiply,
     dot: wasm.dot,
     addLeverage: wasm.addLeverage,
-    leaf: (x, from, { inverseX, shareTarget, shareOutcome, share, inverse }, height, result) =>
-      wasm.leaf(x, from, inverseX, shareTarget, shareOutcome, share, inverse, height, result),
-    leafShift: (x, from, { inverseX, shareTarget, shareOutcome, share, inverse }, weight, base, height, result) =>
-      wasm.leafShift(x, from, inverseX, shareTarget, shareOutcome, share, inverse, weight, base, height, result),
-    step: (x, from, to, { inverseX, shareTarget, shareOutcome, share, inverse }, height, result) =>
-      wasm.step(x, from, to, inverseX, shareTarget, shareOutcome, share, inverse, height, result),
-    stepShift: (x, from, to, { inverseX, shareTarget, shareOutcome, share, inverse }, weight, base, height, result) =>
-      wasm.stepShift(x, from, to, inverseX, shareTarget, shareOutcome, share, inverse, weight, base, height, result),
+    run: wasm.run,
   };
 }
 

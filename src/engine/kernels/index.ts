@@ -2,8 +2,9 @@ import { compiledKernels } from "./compiled";
 import { plainKernels } from "./plain";
 import type { Kernels } from "./types";
 
-export { BLOCK, RESULT } from "./types";
-export type { Kernels, Last } from "./types";
+export { writeOrders } from "./orders";
+export { BLOCK, ORDER, RESULT } from "./types";
+export type { Kernels, Order } from "./types";
 
 let usual: Kernels | undefined;
 

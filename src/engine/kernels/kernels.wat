@@ -4,7 +4,7 @@
   (memory (export "memory") 1)
 
   ;; to = from − share·x
-  (func (export "takeOut") (param $to i32) (param $from i32) (param $x i32) (param $share f64) (param $height i32)
+  (func $takeOut (export "takeOut") (param $to i32) (param $from i32) (param $x i32) (param $share f64) (param $height i32)
     (local $end i32) (local $s v128)
     (local.set $to (i32.shl (local.get $to) (i32.const 3)))
     (local.set $from (i32.shl (local.get $from) (i32.const 3)))
@@ -20,7 +20,7 @@
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
 
   ;; to = factor·x
-  (func (export "times") (param $to i32) (param $x i32) (param $factor f64) (param $height i32)
+  (func $times (export "times") (param $to i32) (param $x i32) (param $factor f64) (param $height i32)
     (local $end i32) (local $s v128)
     (local.set $to (i32.shl (local.get $to) (i32.const 3)))
     (local.set $x (i32.shl (local.get $x) (i32.const 3)))
@@ -33,7 +33,7 @@
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
 
   ;; to = x·y, row by row
-  (func (export "multiply") (param $to i32) (param $x i32) (param $y i32) (param $height i32)
+  (func $multiply (export "multiply") (param $to i32) (param $x i32) (param $y i32) (param $height i32)
     (local $end i32)
     (local.set $to (i32.shl (local.get $to) (i32.const 3)))
     (local.set $x (i32.shl (local.get $x) (i32.const 3)))
@@ -47,7 +47,7 @@
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
 
   ;; sum of x·y
-  (func (export "dot") (param $x i32) (param $y i32) (param $height i32) (result f64)
+  (func $dot (export "dot") (param $x i32) (param $y i32) (param $height i32) (result f64)
     (local $end i32) (local $sum v128)
     (local.set $x (i32.shl (local.get $x) (i32.const 3)))
     (local.set $y (i32.shl (local.get $y) (i32.const 3)))
@@ -60,7 +60,7 @@
     (f64.add (f64x2.extract_lane 0 (local.get $sum)) (f64x2.extract_lane 1 (local.get $sum))))
 
   ;; to = from + inverse·x²
-  (func (export "addLeverage") (param $to i32) (param $from i32) (param $x i32) (param $inverse f64) (param $height i32)
+  (func $addLeverage (export "addLeverage") (param $to i32) (param $from i32) (param $x i32) (param $inverse f64) (param $height i32)
     (local $end i32) (local $s v128) (local $q v128)
     (local.set $to (i32.shl (local.get $to) (i32.const 3)))
     (local.set $from (i32.shl (local.get $from) (i32.const 3)))
@@ -77,7 +77,7 @@
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end)))))
 
   ;; the last column of a path and its one target
-  (func (export "leaf") (param $x i32) (param $from i32) (param $inverseX f64) (param $shareTarget f64)
+  (func $leaf (export "leaf") (param $x i32) (param $from i32) (param $inverseX f64) (param $shareTarget f64)
     (param $shareOutcome f64) (param $share f64) (param $inverse f64) (param $height i32) (param $result i32)
     (local $end i32) (local $inverseX2 v128) (local $shareTarget2 v128) (local $shareOutcome2 v128)
     (local $share2 v128) (local $inverse2 v128) (local $one v128) (local $q v128) (local $d v128) (local $y v128)
@@ -108,11 +108,13 @@
       (local.set $from (i32.add (local.get $from) (i32.const 16)))
       (local.set $x (i32.add (local.get $x) (i32.const 16)))
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end))))
-    (f64.store (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat))))
+    (f64.store (local.get $result)
+      (f64.add (f64.load (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat)))))
     (f64.store offset=16 (local.get $result) (f64.min (f64x2.extract_lane 0 (local.get $gap)) (f64x2.extract_lane 1 (local.get $gap)))))
 
   ;; as leaf, with the shift's square
-  (func (export "leafShift") (param $x i32) (param $from i32) (param $inverseX f64) (param $shareTarget f64)
+  (func $leafShift (export "leafShift") (param $x i32) (param $from i32) (param $inverseX f64) (param $shareTarget f64)
     (param $shareOutcome f64) (param $share f64) (param $inverse f64) (param $weight f64) (param $base i32)
     (param $height i32) (param $result i32)
     (local $end i32) (local $inverseX2 v128) (local $shareTarget2 v128) (local $shareOutcome2 v128)
@@ -150,12 +152,16 @@
       (local.set $from (i32.add (local.get $from) (i32.const 16)))
       (local.set $x (i32.add (local.get $x) (i32.const 16)))
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end))))
-    (f64.store (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat))))
-    (f64.store offset=8 (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $shift)) (f64x2.extract_lane 1 (local.get $shift))))
+    (f64.store (local.get $result)
+      (f64.add (f64.load (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat)))))
+    (f64.store offset=8 (local.get $result)
+      (f64.add (f64.load offset=8 (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $shift)) (f64x2.extract_lane 1 (local.get $shift)))))
     (f64.store offset=16 (local.get $result) (f64.min (f64x2.extract_lane 0 (local.get $gap)) (f64x2.extract_lane 1 (local.get $gap)))))
 
   ;; as leaf, with what is left written for the columns that follow
-  (func (export "step") (param $x i32) (param $from i32) (param $to i32) (param $inverseX f64)
+  (func $step (export "step") (param $x i32) (param $from i32) (param $to i32) (param $inverseX f64)
     (param $shareTarget f64) (param $shareOutcome f64) (param $share f64) (param $inverse f64) (param $height i32)
     (param $result i32)
     (local $end i32) (local $inverseX2 v128) (local $shareTarget2 v128) (local $shareOutcome2 v128)
@@ -192,11 +198,13 @@
       (local.set $to (i32.add (local.get $to) (i32.const 16)))
       (local.set $x (i32.add (local.get $x) (i32.const 16)))
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end))))
-    (f64.store (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat))))
+    (f64.store (local.get $result)
+      (f64.add (f64.load (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat)))))
     (f64.store offset=16 (local.get $result) (f64.min (f64x2.extract_lane 0 (local.get $gap)) (f64x2.extract_lane 1 (local.get $gap)))))
 
   ;; as step, with the shift's square
-  (func (export "stepShift") (param $x i32) (param $from i32) (param $to i32) (param $inverseX f64)
+  (func $stepShift (export "stepShift") (param $x i32) (param $from i32) (param $to i32) (param $inverseX f64)
     (param $shareTarget f64) (param $shareOutcome f64) (param $share f64) (param $inverse f64) (param $weight f64)
     (param $base i32) (param $height i32) (param $result i32)
     (local $end i32) (local $inverseX2 v128) (local $shareTarget2 v128) (local $shareOutcome2 v128)
@@ -239,6 +247,56 @@
       (local.set $to (i32.add (local.get $to) (i32.const 16)))
       (local.set $x (i32.add (local.get $x) (i32.const 16)))
       (br_if $rows (i32.lt_u (local.get $x) (local.get $end))))
-    (f64.store (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat))))
-    (f64.store offset=8 (local.get $result) (f64.add (f64x2.extract_lane 0 (local.get $shift)) (f64x2.extract_lane 1 (local.get $shift))))
-    (f64.store offset=16 (local.get $result) (f64.min (f64x2.extract_lane 0 (local.get $gap)) (f64x2.extract_lane 1 (local.get $gap))))))
+    (f64.store (local.get $result)
+      (f64.add (f64.load (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $meat)) (f64x2.extract_lane 1 (local.get $meat)))))
+    (f64.store offset=8 (local.get $result)
+      (f64.add (f64.load offset=8 (local.get $result))
+        (f64.add (f64x2.extract_lane 0 (local.get $shift)) (f64x2.extract_lane 1 (local.get $shift)))))
+    (f64.store offset=16 (local.get $result) (f64.min (f64x2.extract_lane 0 (local.get $gap)) (f64x2.extract_lane 1 (local.get $gap)))))
+
+  ;; Does the orders between two places of the buffer, each of nine doubles' room: four i32 (what, to, from, x), six f64, two i32 (base, result).
+  (func (export "run") (param $at i32) (param $end i32) (param $height i32)
+    (local $what i32) (local $to i32) (local $from i32) (local $x i32)
+    (local.set $at (i32.shl (local.get $at) (i32.const 3)))
+    (local.set $end (i32.shl (local.get $end) (i32.const 3)))
+    (loop $orders
+      (local.set $what (i32.load (local.get $at)))
+      (local.set $to (i32.load offset=4 (local.get $at)))
+      (local.set $from (i32.load offset=8 (local.get $at)))
+      (local.set $x (i32.load offset=12 (local.get $at)))
+      (block $done
+        (if (i32.eq (local.get $what) (i32.const 0))
+          (then
+            (call $takeOut (local.get $to) (local.get $from) (local.get $x) (f64.load offset=16 (local.get $at)) (local.get $height))
+            (br $done)))
+        (if (i32.eq (local.get $what) (i32.const 1))
+          (then
+            (call $addLeverage (local.get $to) (local.get $from) (local.get $x) (f64.load offset=16 (local.get $at)) (local.get $height))
+            (br $done)))
+        (if (i32.eq (local.get $what) (i32.const 2))
+          (then
+            (call $leaf (local.get $x) (local.get $from)
+              (f64.load offset=16 (local.get $at)) (f64.load offset=24 (local.get $at)) (f64.load offset=32 (local.get $at)) (f64.load offset=40 (local.get $at)) (f64.load offset=48 (local.get $at))
+              (local.get $height) (i32.load offset=68 (local.get $at)))
+            (br $done)))
+        (if (i32.eq (local.get $what) (i32.const 3))
+          (then
+            (call $leafShift (local.get $x) (local.get $from)
+              (f64.load offset=16 (local.get $at)) (f64.load offset=24 (local.get $at)) (f64.load offset=32 (local.get $at)) (f64.load offset=40 (local.get $at)) (f64.load offset=48 (local.get $at))
+              (f64.load offset=56 (local.get $at)) (i32.load offset=64 (local.get $at))
+              (local.get $height) (i32.load offset=68 (local.get $at)))
+            (br $done)))
+        (if (i32.eq (local.get $what) (i32.const 4))
+          (then
+            (call $step (local.get $x) (local.get $from) (local.get $to)
+              (f64.load offset=16 (local.get $at)) (f64.load offset=24 (local.get $at)) (f64.load offset=32 (local.get $at)) (f64.load offset=40 (local.get $at)) (f64.load offset=48 (local.get $at))
+              (local.get $height) (i32.load offset=68 (local.get $at)))
+            (br $done)))
+        (call $stepShift (local.get $x) (local.get $from) (local.get $to)
+          (f64.load offset=16 (local.get $at)) (f64.load offset=24 (local.get $at)) (f64.load offset=32 (local.get $at)) (f64.load offset=40 (local.get $at)) (f64.load offset=48 (local.get $at))
+          (f64.load offset=56 (local.get $at)) (i32.load offset=64 (local.get $at))
+          (local.get $height) (i32.load offset=68 (local.get $at))))
+      (local.set $at (i32.add (local.get $at) (i32.const 72)))
+      (br_if $orders (i32.lt_u (local.get $at) (local.get $end)))))
+)

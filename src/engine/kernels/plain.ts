@@ -1,5 +1,6 @@
-import { BLOCK } from "./types";
-import type { Kernels, Last } from "./types";
+import { WHAT } from "./orders";
+import { BLOCK, ORDER } from "./types";
+import type { Kernels } from "./types";
 
 /** The loops in plain JavaScript: what the compiled ones are checked against, and what runs where these cannot. */
 export function plainKernels(): Kernels {
@@ -9,8 +10,7 @@ export function plainKernels(): Kernels {
     x: number,
     from: number,
     to: number,
-    { inverseX, shareTarget, shareOutcome, share, inverse }: Last,
-    weight: number,
+    [inverseX, shareTarget, shareOutcome, share, inverse, weight]: Float64Array,
     base: number,
     height: number,
     result: number,
@@ -34,11 +34,11 @@ export function plainKernels(): Kernels {
       meat += z * z;
       if (base >= 0) shift += (weight * z - w[base + i]) ** 2;
     }
-    w[result] = meat;
-    w[result + 1] = shift;
+    w[result] += meat;
+    w[result + 1] += shift;
     w[result + 2] = gap;
   };
-  return {
+  const loops: Kernels = {
     room: (doubles) => (w.length < doubles ? (w = new Float64Array(doubles)) : w),
     takeOut: (to, from, x, share, height) => {
       for (let i = 0; i < height; i++) w[to + i] = w[from + i] - share * w[x + i];
@@ -57,9 +57,18 @@ export function plainKernels(): Kernels {
     addLeverage: (to, from, x, inverse, height) => {
       for (let i = 0; i < height; i++) w[to + i] = w[from + i] + w[x + i] * w[x + i] * inverse;
     },
-    leaf: (x, from, numbers, height, result) => last(x, from, -1, numbers, 0, -1, height, result),
-    leafShift: (x, from, numbers, weight, base, height, result) => last(x, from, -1, numbers, weight, base, height, result),
-    step: (x, from, to, numbers, height, result) => last(x, from, to, numbers, 0, -1, height, result),
-    stepShift: (x, from, to, numbers, weight, base, height, result) => last(x, from, to, numbers, weight, base, height, result),
+    run: (at, end, height) => {
+      const integers = new Int32Array(w.buffer);
+      for (let place = at; place < end; place += ORDER) {
+        const [what, to, from, x] = integers.subarray(place * 2, place * 2 + 4);
+        const numbers = w.subarray(place + 2, place + 8);
+        const [base, result] = integers.subarray((place + 8) * 2, (place + 8) * 2 + 2);
+        const kind = WHAT[what];
+        if (kind === "takeOut") loops.takeOut(to, from, x, numbers[0], height);
+        else if (kind === "addLeverage") loops.addLeverage(to, from, x, numbers[0], height);
+        else last(x, from, kind.startsWith("step") ? to : -1, numbers, kind.endsWith("Shift") ? base : -1, height, result);
+      }
+    },
   };
+  return loops;
 }

@@ -1,8 +1,28 @@
 /** Rows of a block, and so the length of a column in the buffer. */
 export const BLOCK = 256;
 
-/** Doubles in a result: Σ of the meat, Σ of the shift's squares, the smallest 1 − h (read first, then lowered). */
+/** Doubles of a model's sums: Σ of the meat, Σ of the shift's squares, the smallest 1 − h. */
 export const RESULT = 3;
+
+/** Doubles of an order. */
+export const ORDER = 9;
+
+/**
+ * One thing to do with a block, as it stands in the buffer: four 32-bit integers (what, to, from, x), six doubles, two integers (base,
+ * result). "takeOut" and "addLeverage" use the first of the doubles alone.
+ */
+export interface Order {
+  readonly what: "takeOut" | "addLeverage" | "leaf" | "leafShift" | "step" | "stepShift";
+  readonly to: number;
+  readonly from: number;
+  readonly x: number;
+  /** Share or inverse; or inverseX, shareTarget, shareOutcome, share, inverse and, with a shift, weight. */
+  readonly numbers: readonly number[];
+  /** Column of the base fit's influences. */
+  readonly base: number;
+  /** Where the model's sums stand. */
+  readonly result: number;
+}
 
 /**
  * The inner loops of a pass over the rows, on one block. All columns are stretches of one buffer, so that the loops stay in the cache;
@@ -22,21 +42,9 @@ export interface Kernels {
   dot(x: number, y: number, height: number): number;
   /** to = from + inverse·x²: the leverage that a column adds. */
   addLeverage(to: number, from: number, x: number, inverse: number, height: number): void;
-  /** A path's last column x and its one target under HC3 in one loop: nothing is written but the result, for nothing follows. */
-  leaf(x: number, from: number, last: Last, height: number, result: number): void;
-  /** As leaf, with the shift's square. @param base column of the base fit's influences */
-  leafShift(x: number, from: number, last: Last, weight: number, base: number, height: number, result: number): void;
-  /** As leaf, with what is left of target, outcome and leverage written for the columns that follow. */
-  step(x: number, from: number, to: number, last: Last, height: number, result: number): void;
-  /** As step, with the shift's square. */
-  stepShift(x: number, from: number, to: number, last: Last, weight: number, base: number, height: number, result: number): void;
-}
-
-/** Numbers of a path's last column and its one target (see Node and Finish). */
-export interface Last {
-  readonly inverseX: number;
-  readonly shareTarget: number;
-  readonly shareOutcome: number;
-  readonly share: number;
-  readonly inverse: number;
+  /**
+   * Does the orders that stand from `at` to `end`. A leaf is a path's last column x and its one target under HC3 in one loop; a step also
+   * writes what is left of target, outcome and leverage, for the columns that follow. Both add to the sums at `result`.
+   */
+  run(at: number, end: number, height: number): void;
 }

@@ -2,7 +2,7 @@ import { dotDoubled, residualDoubled } from "./doubled";
 import { factorise } from "./factorise";
 import { fitColumns } from "./fit";
 import { residuals } from "./rows";
-import type { Fit, Frame } from "./types";
+import type { Factor, Fit, Frame } from "./types";
 
 /** Rounds of refinement; each gains up to 15 digits less the logarithm of the condition number. */
 const ROUNDS = 3;
@@ -15,10 +15,10 @@ const MANY_ROWS = 20_000;
  * precision: the digits that plain doubles lose to a near dependence come back, also where the residuals are large.
  * A fit that needs none of it (well conditioned) is returned as it is.
  */
-export function refine(frame: Frame, fit: Fit): Fit {
+export function refine(frame: Frame, factor: Factor, fit: Fit): Fit {
   const p = fit.columns.length;
   if (p === 0 || fit.residualDf < 0) return fit;
-  if (condition(fit, frame) < WELL_CONDITIONED[frame.n > MANY_ROWS ? "many" : "few"]) return fit;
+  if (condition(factor, fit) < WELL_CONDITIONED[frame.n > MANY_ROWS ? "many" : "few"]) return fit;
   const columns = fit.columns.map((c) => frame.columns[c]);
   const b = Float64Array.from(fit.coefficients);
   let r = residuals(frame, fit);
@@ -50,25 +50,18 @@ export function refine(frame: Frame, fit: Fit): Fit {
 }
 
 /** Condition number of the columns scaled to unit norm, from above (Frobenius norms). */
-function condition(fit: Fit, frame: Frame): number {
+function condition(factor: Factor, fit: Fit): number {
   const p = fit.columns.length;
   let inverse = 0;
-  for (let j = 0; j < p; j++) inverse += squaredNorm(frame, fit.columns[j]) * fit.inverse[j * p + j];
+  for (let j = 0; j < p; j++) inverse += squaredNorm(factor, fit.columns[j]) * fit.inverse[j * p + j];
   return Math.sqrt(p * inverse);
 }
 
-const norms = new WeakMap<Float64Array, number>();
-
-/** Σ w x² of a frame's column, found once. */
-function squaredNorm(frame: Frame, column: number): number {
-  const x = frame.columns[column];
-  let norm = norms.get(x);
-  if (norm === undefined) {
-    norm = 0;
-    for (let i = 0; i < x.length; i++) norm += (frame.weights ? frame.weights[i] : 1) * x[i] * x[i];
-    norms.set(x, norm);
-  }
-  return norm;
+/** Σ w x² of a frame's column: R's column has its norm. */
+function squaredNorm({ r, size, scale }: Factor, column: number): number {
+  let sum = 0;
+  for (let i = 0; i <= column; i++) sum += r[i * (size + 1) + column] ** 2;
+  return sum * scale[column] * scale[column];
 }
 
 /** U'·v of an upper triangle. */

@@ -1,3 +1,6 @@
+/** Sums of squares between these are exact to rounding. */
+const SAFE_SQUARES = [1e-200, 1e200] as const;
+
 /**
  * The power of two nearest the Euclidean norm of √w·x: dividing by it is exact and leaves a column of norm between 0.7 and 1.5.
  * Free of overflow: the largest entry is taken out first. 0 for an all-zero column.
@@ -5,6 +8,9 @@
  * @param weights length n, positive, or null
  */
 export function powerOfTwoNorm(x: Float64Array, weights: Float64Array | null): number {
+  const squares = sumOfSquares(x, weights);
+  // within these bounds neither overflow nor underflow can have touched a square that counts
+  if (squares > SAFE_SQUARES[0] && squares < SAFE_SQUARES[1]) return powerOfTwo(Math.sqrt(squares));
   let largest = 0;
   for (let i = 0; i < x.length; i++) {
     const size = Math.abs(x[i]);
@@ -19,6 +25,13 @@ export function powerOfTwoNorm(x: Float64Array, weights: Float64Array | null): n
   // A norm beyond double range is left to the unit alone: the factor stays finite.
   const scale = unit * powerOfTwo(norm);
   return Number.isFinite(scale) && scale > 0 ? scale : unit;
+}
+
+function sumOfSquares(x: Float64Array, weights: Float64Array | null): number {
+  let sum = 0;
+  if (weights) for (let i = 0; i < x.length; i++) sum += weights[i] * x[i] * x[i];
+  else for (let i = 0; i < x.length; i++) sum += x[i] * x[i];
+  return sum;
 }
 
 /** 2^round(log₂ x) for x > 0. */

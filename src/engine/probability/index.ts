@@ -33,8 +33,18 @@ export function tQuantile(p: number, df: number): number {
 
 /** The t with P(|T| ≤ t) = level, 0 < level < 1: the factor of a two-sided interval. */
 export function tCritical(level: number, df: number): number {
-  return upperQuantile((1 - level) / 2, df);
+  const key = `${level} ${df}`;
+  let found = criticals.get(key);
+  if (found === undefined) {
+    if (criticals.size >= CRITICALS) criticals.clear();
+    criticals.set(key, (found = upperQuantile((1 - level) / 2, df)));
+  }
+  return found;
 }
+
+/** Thousands of sets ask for the same few: kept, up to a number. */
+const CRITICALS = 10_000;
+const criticals = new Map<string, number>();
 
 function upperQuantile(tail: number, df: number): number {
   let t = startingQuantile(1 - tail, df);

@@ -17,8 +17,12 @@ export function isAmount(column: Column): column is NumberColumn {
 /** The distinct values of a numeric column, ascending; stops beyond `limit` and returns null. */
 export function distinctValues(values: Float64Array, limit: number): number[] | null {
   const seen = new Set<number>();
-  for (const value of values) {
-    if (Number.isNaN(value)) continue;
+  let [last, before] = [NaN, NaN];
+  for (let i = 0; i < values.length; i++) {
+    const value = values[i];
+    // the two values seen last need no looking up: groups coded 0 and 1
+    if (value === last || value === before || value !== value) continue;
+    [last, before] = [value, last];
     seen.add(value === 0 ? 0 : value); // −0 is 0
     if (seen.size > limit) return null;
   }
@@ -38,10 +42,15 @@ export function asGroups(column: Column): Groups {
 function numberGroups(column: NumberColumn): Groups {
   const distinct = distinctValues(column.values, Infinity)!;
   const place = new Map(distinct.map((value, at) => [value, at]));
-  return {
-    levels: distinct.map(String),
-    codes: Int32Array.from(column.values, (value) => (Number.isNaN(value) ? -1 : place.get(value === 0 ? 0 : value)!)),
-  };
+  const { values } = column;
+  const codes = new Int32Array(values.length);
+  let [last, code] = [NaN, -1];
+  for (let i = 0; i < values.length; i++) {
+    const value = values[i];
+    if (value !== last) [last, code] = [value, value !== value ? -1 : place.get(value === 0 ? 0 : value)!];
+    codes[i] = code;
+  }
+  return { levels: distinct.map(String), codes };
 }
 
 /** Whether a column is groups by nature: words, or a numeric column with exactly two values (METHODS 2). */

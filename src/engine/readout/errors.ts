@@ -25,7 +25,7 @@ export function withErrors(
 ): SetFit[] {
   const targets = design.exposure.columns;
   const [first] = solved;
-  const base = first.enough ? ownErrors(design, first.fit, variance, depth(0)) : null;
+  const base = first.enough ? ownErrors(design, first.fit, variance, depth(0), passing.memory) : null;
   const others = solved.flatMap((set, i) => (i > 0 && set.enough && depth(i) === "exposure" ? [i] : []));
   const together = new Map<number, TreeErrors | null>();
   if (others.length > 0) {
@@ -38,14 +38,16 @@ export function withErrors(
     if (!set.enough) return { ...set, cov: null, shiftSquares: null };
     if (i === 0) return { ...set, cov: base, shiftSquares: null };
     const found = together.get(i);
-    if (!found) return { ...set, cov: ownErrors(design, set.fit, variance, depth(i)), shiftSquares: null };
+    if (!found) return { ...set, cov: ownErrors(design, set.fit, variance, depth(i), passing.memory), shiftSquares: null };
     return { ...set, cov: withoutRows(found.errors), shiftSquares: found.shift };
   });
 }
 
-function ownErrors(design: Design, fit: Fit, variance: Variance, depth: Depth): Covariance {
+function ownErrors(design: Design, fit: Fit, variance: Variance, depth: Depth, memory?: RowMemory): Covariance {
   if (depth === "first look") return withoutRows(classicalErrors(fit));
-  return covariance(design.frame, fit, variance, depth === "exposure" ? firstOf(fit, design.exposure.columns) : 0);
+  const { n } = design.frame;
+  const from = depth === "exposure" ? firstOf(fit, design.exposure.columns) : 0;
+  return covariance(design.frame, fit, variance, from, memory && { e: memory.take(n), h: memory.take(n) });
 }
 
 function firstOf(fit: Fit, columns: readonly number[]): number {
@@ -60,10 +62,6 @@ function baseInfluences(design: Design, fit: Fit, cov: Covariance, memory?: RowM
   if (cov.clustered || !design.exposure.columns.every((column) => fit.columns.includes(column))) return null;
   return design.exposure.columns.map((column) => {
     const unit = Float64Array.from(fit.columns, (c) => (c === column ? 1 : 0));
-    const psi = influence(design.frame, fit, cov, unit);
-    if (!memory) return psi;
-    const kept = memory.take(psi.length);
-    kept.set(psi);
-    return kept;
+    return influence(design.frame, fit, cov, unit, memory?.take(design.frame.n));
   });
 }

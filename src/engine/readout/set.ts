@@ -53,7 +53,7 @@ export function solveSet(
   const short = first.residualDf <= 0 && first.setAside.some(({ column }) => exposure.includes(column));
   const clusters = variance === "CR1" || variance === "CR2" ? (frame.clusters?.count ?? 0) : null;
   const enough = first.residualDf > 0 && (clusters === null || clusters > 1);
-  const fit = enough && depth !== "first look" ? refine(frame, first) : first;
+  const fit = enough && depth !== "first look" ? refine(frame, factor, first) : first;
   const aside = first.setAside.filter(({ column }) => !exposure.includes(column));
   const tooFew: Reason | null =
     short || frame.n <= exposure.length ? { code: "too-few-rows", rows: frame.n, coefficients: wanted.length } : null;

@@ -56,9 +56,8 @@ export function findRows(table: Table, plan: Plan, resolved: Resolved): Rows {
     const taken = takes(set);
     return patterns.reduce((sum, { rows }, i) => sum + (taken[i] ? rows : 0), 0);
   };
-  const keptRows = kept.reduce((sum, k) => sum + k, 0);
   const findings: Finding[] = plan.keep?.length
-    ? [{ code: "kept-rows", rows: keptRows, columns: [...new Set(plan.keep.map((k) => k.column))] }]
+    ? [{ code: "kept-rows", rows: kept.reduce((sum, k) => sum + k, 0), columns: [...new Set(plan.keep.map((k) => k.column))] }]
     : [];
   return { common, own, ownCount, count: { read: n, common: common.length, droppedBy: losses.byColumn() }, findings };
 }
@@ -135,11 +134,13 @@ function patternsOf(
   lost: Uint8Array,
   sources: Resolved["sources"],
 ): { pattern: Int32Array; patterns: { missing: Set<string>; rows: number }[] } {
-  const pattern = Int32Array.from(lost, (gone) => -gone);
+  const pattern = new Int32Array(n);
+  for (let i = 0; i < n; i++) pattern[i] = -lost[i];
   const patterns = [{ missing: new Set<string>(), rows: 0 }];
   const mark = new Uint8Array(n);
   for (const [column, source] of sources) {
     missingIn(source)(mark.fill(0));
+    if (!mark.includes(1)) continue;
     const split = new Map<number, number>();
     for (let i = 0; i < n; i++) {
       if (mark[i] === 0 || pattern[i] < 0) continue;

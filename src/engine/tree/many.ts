@@ -1,3 +1,4 @@
+import { BLOCK } from "../kernels";
 import type { Kernels } from "../kernels";
 import type { Finish, Meat, Sums } from "./types";
 
@@ -5,25 +6,24 @@ import type { Finish, Meat, Sums } from "./types";
 export interface Place {
   readonly w: Float64Array;
   readonly kernels: Kernels;
+  readonly finish: Finish;
   readonly targets: readonly number[];
   readonly outcome: number;
   readonly leverage: number;
-  /** Free room for q + 3 columns of `stride` rows. */
+  /** Free room for q + 3 columns. */
   readonly room: number;
-  readonly stride: number;
   readonly height: number;
 }
 
 /** Any number of targets and any kind of error: takes the targets out one after another, then adds the block's sums. */
 export function finishMany(
-  { w, kernels, targets, outcome, leverage, room, stride, height }: Place,
-  finish: Finish,
+  { w, kernels, finish, targets, outcome, leverage, room, height }: Place,
   kind: Meat,
   base: readonly number[] | null,
   sums: Sums,
 ): void {
   const q = targets.length;
-  const at = (a: number) => room + a * stride;
+  const at = (a: number) => room + a * BLOCK;
   const [e, h, scaled] = [at(q), at(q + 1), at(q + 2)];
   for (let a = 0; a < q; a++) w.copyWithin(at(a), targets[a], targets[a] + height);
   w.copyWithin(e, outcome, outcome + height);

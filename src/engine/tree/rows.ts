@@ -1,7 +1,8 @@
-import { BLOCK, kernels as usualKernels, loadBlock, RESULT } from "../kernels";
-import type { Kernels, Last } from "../kernels";
+import { BLOCK, kernels as usualKernels, loadBlock, ORDER, RESULT, writeOrders } from "../kernels";
+import type { Kernels, Order } from "../kernels";
 import { finishMany } from "./many";
-import type { Meat, Node, Sums, WalkTask } from "./types";
+import type { Place } from "./many";
+import type { Meat, Program, Sums, WalkTask } from "./types";
 
 /** Blocks between two looks at the cancel flag. */
 const BLOCKS_A_LOOK = 8;
@@ -25,10 +26,12 @@ export function walkRows(
   kernels: Kernels = usualKernels(),
 ): void {
   const { program, source, meat: kind, from, to } = task;
-  const [meat, shift, gap] = into;
-  const walk = layOut(task, { meat, shift, gap }, kernels);
-  const { w, outcome } = walk;
-  const lasts = program.nodes.map((node) => (program.targets === 1 && kind === "HC3" ? lastOf(node) : null));
+  const layout = layOut(task);
+  const { stretches, orders } = listOrders(program, layout, source.base !== null, kind);
+  const w = kernels.room(layout.orders + orders.length * ORDER);
+  const sums: Sums = { meat: into[0], shift: into[1], gap: into[2] };
+  for (let model = 0; model < program.models; model++) w.set([0, 0, 1], layout.results + model * RESULT);
+  writeOrders(w, layout.orders, orders);
   const roots = source.weights ? new Float64Array(BLOCK) : null;
   for (let start = from, count = 0; start < to; start += BLOCK, count++) {
     if (count % BLOCKS_A_LOOK === 0) stop();
@@ -39,80 +42,90 @@ export function walkRows(
       loadBlock(kernels, w, slot * BLOCK, column, start, height, 1 / program.scale[slot]);
       if (roots) for (let i = 0; i < height; i++) w[slot * BLOCK + i] *= roots[i];
     });
-    w.fill(0, outcome + BLOCK, outcome + 2 * BLOCK);
-    source.base?.forEach((column, a) => loadBlock(kernels, w, walk.base![a], column, start, height));
-    program.nodes.forEach((node, i) => visit(walk, node, lasts[i], even));
+    w.fill(0, layout.outcome + BLOCK, layout.outcome + 2 * BLOCK);
+    source.base?.forEach((column, a) => loadBlock(kernels, w, layout.base[a], column, start, height));
+    for (const { first, last, finish } of stretches) {
+      if (last > first) kernels.run(layout.orders + first * ORDER, layout.orders + last * ORDER, even);
+      if (finish) finishMany({ w, kernels, room: layout.room, height: even, ...finish }, kind, source.base && layout.base, sums);
+    }
   }
+  addSingle(w, layout, program, sums);
 }
 
-/** The buffer: a level for each column taken (its columns, the outcome, the leverages), room to finish in, the base's influences, a result. */
-interface Walk {
-  readonly w: Float64Array;
-  readonly kernels: Kernels;
+/** Orders to run one after another, then a model with several targets to finish, if one ends there. */
+interface Stretch {
+  readonly first: number;
+  readonly last: number;
+  readonly finish: Omit<Place, "w" | "kernels" | "room" | "height"> | null;
+}
+
+function listOrders(program: Program, layout: Layout, shift: boolean, kind: Meat): { stretches: Stretch[]; orders: Order[] } {
+  const { targets: q } = program;
+  const single = q === 1 && kind === "HC3";
+  const { level, outcome } = layout;
+  const orders: Order[] = [];
+  const stretches: Stretch[] = [];
+  const close = (finish: Stretch["finish"]) =>
+    stretches.push({ first: stretches.at(-1)?.last ?? 0, last: orders.length, finish });
+  for (const node of program.nodes) {
+    const { slots, shares, finish } = node;
+    const [above, here] = [(node.depth - 1) * level, node.depth * level];
+    const x = above + node.take * BLOCK;
+    const one = single ? finish : null;
+    // one target's and the outcome's shares come last
+    const apart = one ? slots.length - 2 : slots.length;
+    for (let k = 0; k < apart; k++) {
+      const slot = slots[k] * BLOCK;
+      orders.push({ what: "takeOut", to: here + slot, from: above + slot, x, numbers: [shares[k]], base: 0, result: 0 });
+    }
+    if (one) {
+      const target = outcome - BLOCK;
+      const numbers = [node.inverse, ...shares.subarray(apart), one.shares[1], one.inverse[0], one.weights[0]];
+      const what = `${node.leaf ? "leaf" : "step"}${shift ? "Shift" : ""}` as const;
+      const result = layout.results + one.model * RESULT;
+      orders.push({ what, to: here + target, from: above + target, x, numbers, base: layout.base[0] ?? 0, result });
+      continue;
+    }
+    const leverage = outcome + BLOCK;
+    const numbers = [node.inverse];
+    orders.push({ what: "addLeverage", to: here + leverage, from: above + leverage, x, numbers, base: 0, result: 0 });
+    if (!finish) continue;
+    const targets = Array.from({ length: q }, (_, a) => here + outcome - (q - a) * BLOCK);
+    close({ finish, targets, outcome: here + outcome, leverage: here + leverage });
+  }
+  close(null);
+  return { stretches, orders };
+}
+
+/**
+ * Places in the buffer: a level for each column taken (its columns, the outcome, the leverages), room to finish in, the base's influences,
+ * the sums of models with one target, the orders.
+ */
+interface Layout {
   readonly level: number;
   /** Where the outcome stands in a level. */
   readonly outcome: number;
   readonly room: number;
-  readonly base: readonly number[] | null;
-  readonly result: number;
-  readonly q: number;
-  readonly kind: Meat;
-  readonly sums: Sums;
+  readonly base: readonly number[];
+  readonly results: number;
+  readonly orders: number;
 }
 
-function layOut({ program, source, meat: kind }: WalkTask, sums: Sums, kernels: Kernels): Walk {
-  const { columns, targets: q, depth } = program;
+function layOut({ program: { columns, targets: q, depth, models }, source }: WalkTask): Layout {
   const level = (columns.length + 2) * BLOCK;
   const room = (depth + 1) * level;
-  const base = source.base?.map((_, a) => room + (q + 3 + a) * BLOCK) ?? null;
-  const result = room + (q + 3 + (base?.length ?? 0)) * BLOCK;
-  const w = kernels.room(result + RESULT);
-  return { w, kernels, level, outcome: columns.length * BLOCK, room, base, result, q, kind, sums };
+  const base = (source.base ?? []).map((_, a) => room + (q + 3 + a) * BLOCK);
+  const results = room + (q + 3 + base.length) * BLOCK;
+  return { level, outcome: columns.length * BLOCK, room, base, results, orders: results + models * RESULT };
 }
 
-/** For a node where a model with one target ends, under HC3; null for others. */
-function lastOf({ inverse: inverseX, shares, finish }: Node): Last | null {
-  if (!finish) return null;
-  const [shareTarget, shareOutcome] = shares.subarray(shares.length - 2);
-  return { inverseX, shareTarget, shareOutcome, share: finish.shares[1], inverse: finish.inverse[0] };
-}
-
-/** @param last where a model with one target ends here, under HC3 */
-function visit(walk: Walk, node: Node, last: Last | null, height: number): void {
-  const { kernels, level, outcome, q, kind } = walk;
-  const above = (node.depth - 1) * level;
-  const here = node.depth * level;
-  const x = above + node.take * BLOCK;
-  const { finish } = node;
-  // one target's and the outcome's shares come last; a leaf has no others
-  const others = last ? node.slots.length - 2 : node.slots.length;
-  for (let k = 0; k < others; k++) {
-    const slot = node.slots[k] * BLOCK;
-    kernels.takeOut(here + slot, above + slot, x, node.shares[k], height);
+/** Sums of the models that were finished by an order. */
+function addSingle(w: Float64Array, { results }: Layout, { targets, models }: Program, { meat, shift, gap }: Sums): void {
+  if (targets !== 1) return;
+  for (let model = 0; model < models; model++) {
+    const at = results + model * RESULT;
+    meat[model] += w[at];
+    shift[model] += w[at + 1];
+    gap[model] = Math.min(gap[model], w[at + 2] - 1);
   }
-  if (last) {
-    finishOne(walk, node, last, x, above + outcome - BLOCK, here + outcome - BLOCK, height);
-    return;
-  }
-  const leverage = outcome + BLOCK;
-  kernels.addLeverage(here + leverage, above + leverage, x, node.inverse, height);
-  if (!finish) return;
-  const { w, room, base, sums } = walk;
-  const targets = Array.from({ length: q }, (_, a) => here + outcome - (q - a) * BLOCK);
-  const place = { w, kernels, targets, outcome: here + outcome, leverage: here + leverage, room, stride: BLOCK, height };
-  finishMany(place, finish, kind, base, sums);
-}
-
-function finishOne(walk: Walk, node: Node, last: Last, x: number, from: number, to: number, height: number): void {
-  const { w, kernels, base, result, sums } = walk;
-  const { model, weights } = node.finish!;
-  w[result + 2] = 1 + sums.gap[model];
-  if (base) {
-    if (node.leaf) kernels.leafShift(x, from, last, weights[0], base[0], height, result);
-    else kernels.stepShift(x, from, to, last, weights[0], base[0], height, result);
-    sums.shift[model] += w[result + 1];
-  } else if (node.leaf) kernels.leaf(x, from, last, height, result);
-  else kernels.step(x, from, to, last, height, result);
-  sums.meat[model] += w[result];
-  sums.gap[model] = w[result + 2] - 1;
 }

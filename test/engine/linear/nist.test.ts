@@ -11,10 +11,12 @@ import { FILIP_SHAPE, LONGLEY, wampler } from "./nist";
 
 function fit(columns: readonly Float64Array[], outcome: Float64Array): Float64Array {
   const frame: Frame = { n: outcome.length, columns, outcome, weights: null, clusters: null };
+  const factor = factorise(frame);
   const found = refine(
     frame,
+    factor,
     fitColumns(
-      factorise(frame),
+      factor,
       columns.map((_, i) => i),
     ),
   );
