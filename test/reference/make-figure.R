@@ -9,8 +9,8 @@ covariance <- function(m, kind) if (kind == "classical") vcov(m) else vcovHC(m, 
 # the mean row of the model matrix with one exposure level and one value of the modifier: the mean outcome over the others as they are
 meanRow <- function(m, d, set) { for (v in names(set)) d[[v]] <- if (is.factor(d[[v]])) factor(set[[v]], levels(d[[v]])) else set[[v]]
   colMeans(model.matrix(delete.response(terms(m)), d, xlev = m$xlevels)) }
-along <- function(name, file, plan, d, f, exposure, modifier, at, kind, q = 1) {
-  m <- lm(f, d); V <- covariance(m, kind); b <- coef(m); df <- df.residual(m)
+along <- function(name, file, plan, d, f, exposure, modifier, at, kind, q = 1, w = NULL) {
+  d$.w <- if (is.null(w)) rep(1, nrow(d)) else d[[w]]; m <- lm(f, d, weights = .w); V <- covariance(m, kind); b <- coef(m); df <- df.residual(m)
   row <- function(g, x) meanRow(m, d, setNames(list(g, x), c(exposure, modifier)))
   said <- function(L, crit) { e <- sum(L * b); s <- sqrt(drop(t(L) %*% V %*% L)); list(estimate = exact(e), standardError = exact(s), low = exact(e - crit * s), high = exact(e + crit * s)) }
   tt <- qt(.975, df); ss <- sqrt((1 + q) * qf(.95, 1 + q, df)); g <- levels(d[[exposure]])
@@ -29,7 +29,8 @@ cases <- list(
   along("births by age, race averaged over, HC3", "birthwt.csv", plan("bwt", "smoke", 0, c("age", "race", "lwt"), "age", "HC3"), birth, bwt ~ race + lwt + smoke * age, "smoke", "age", c(14, 20, 30, 45), "HC3"),
   along("anorexia, three groups, classical", "anorexia.csv", plan("Postwt", "Treat", "Cont", "Prewt", "Prewt", "classical"), an, Postwt ~ Treat * Prewt, "Treat", "Prewt", c(70, 75, 80, 94.9), "classical"),
   along("mtcars by the logarithm of power, HC3", "mtcars.csv", plan("mpg", "am", 0, "hp", "hp", "HC3", "log"), mt, mpg ~ am * log(hp), "am", "hp", c(52, 335), "HC3"),
-  along("mtcars by a curve in weight, HC2", "mtcars.csv", plan("mpg", "am", 0, "wt", "wt", "HC2", list(polynomial = 2)), mt, mpg ~ am * (wt + I(wt^2)), "am", "wt", c(1.513, 2, 3, 4, 5.424), "HC2", q = 2))
+  along("mtcars by a curve in weight, HC2", "mtcars.csv", plan("mpg", "am", 0, "wt", "wt", "HC2", list(polynomial = 2)), mt, mpg ~ am * (wt + I(wt^2)), "am", "wt", c(1.513, 2, 3, 4, 5.424), "HC2", q = 2),
+  along("births by age, weighted, HC3", "birthwt.csv", c(plan("bwt", "smoke", 0, c("age", "race"), "age", "HC3"), list(weights = "lwt")), birth, bwt ~ race + smoke * age, "smoke", "age", c(14, 20, 30, 45), "HC3", w = "lwt"))
 # an amount: its slope along the modifier, and the residuals whose slope is the table's
 sw <- lm(Fertility ~ Examination + Education * Catholic, swiss); V <- vcovHC(sw, type = "HC3"); df <- df.residual(sw); i <- c("Education", "Education:Catholic")
 amount <- list(at = exact(c(2.15, 10, 50, 100)), differences = lapply(c(2.15, 10, 50, 100), function(x) { L <- 10 * c(1, x); e <- sum(L * coef(sw)[i]); s <- sqrt(drop(t(L) %*% V[i, i] %*% L)); tt <- qt(.975, df); ss <- sqrt(2 * qf(.95, 2, df))

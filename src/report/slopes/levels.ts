@@ -7,6 +7,9 @@ import { valuesAxis } from "./axes";
 import { NOTHING_DRAWN } from "./pieces";
 import type { Plot } from "./presentation";
 
+/** Up to this many levels the summary says each; of more, the lowest and the highest. */
+const SAID_LEVELS = 4;
+
 /** The difference at each level of a category, a dot and an interval each; none where it cannot be estimated. */
 export function levelsPlot(voice: Voice, modifier: string, levels: readonly LevelDifference[]): Plot[] {
   const { plan, scale, comparison } = voice;
@@ -25,13 +28,15 @@ export function levelsPlot(voice: Voice, modifier: string, levels: readonly Leve
   );
   const label = ({ value }: LevelDifference) => (typeof value === "number" ? placeText(value) : word(value));
   const texts = drawn.map((level) => saySpot(voice, modifier, level.value, { ...level, everywhere: null }, decimals));
+  const order = drawn.map((_, i) => i).sort((a, b) => drawn[a].estimate - drawn[b].estimate);
+  const [lowest, highest] = [order[0], order[order.length - 1]];
   const text = (value: number) => fixed(scale.show(value), decimals);
   return [
     {
       ...NOTHING_DRAWN,
       kind: "levels",
       title: slopesWords.levels(voice, name),
-      summary: texts.join(" "),
+      summary: texts.length <= SAID_LEVELS ? texts.join(" ") : [texts[lowest], texts[highest]].join(" "),
       x: {
         label: name,
         from: -0.5,

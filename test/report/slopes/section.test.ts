@@ -48,6 +48,16 @@ describe("every section", () => {
     expect(lines.points.reduce((sum, { x: drawn }) => sum + drawn.length, 0)).toBe(2000);
     expect(lines.points.map(({ note }) => note)).toEqual(["2,000 of 5,000 rows drawn", null]);
   });
+  it("says the lowest and the highest of many levels, and draws all", () => {
+    const { uniform, normal } = seeded(6);
+    const z = Array.from({ length: 600 }, (_, i) => `z${i % 6}`);
+    const g = z.map(() => (uniform() < 0.5 ? "a" : "b"));
+    const y = z.map((level, i) => (g[i] === "b" ? Number(level.slice(1)) : 0) + 0.3 * normal());
+    const plan = planOf("y", "g", ["z"], { exposure: { column: "g", reference: "a" } });
+    const [levels] = sectionOf({ table: tableOf({ z, g, y }), plan }).plots;
+    expect(levels.intervals.map((mark) => mark.name)).toEqual(["z0", "z1", "z2", "z3", "z4", "z5"]);
+    expect(levels.summary).toBe(`${levels.stops[0].text} ${levels.stops[5].text}`);
+  });
   it("of values near the end of double range holds no infinity", () => {
     const { normal } = seeded(9);
     const x = Array.from({ length: 40 }, normal);
