@@ -87,9 +87,11 @@ describe("a second thread", () => {
     expect(new SecondThread(script).passing(MANY_ROWS - 1)).toEqual({});
     const assistant = new ThreadAssistant(script);
     const task = factorTask(new SharedRows());
-    const started = await begun(assistant, task);
+    const [column] = (task as Extract<RowTask, { kind: "factor" }>).columns;
+    const long: RowTask = { ...task, columns: new Array(80).fill(column), scale: new Float64Array(80).fill(1) } as RowTask;
+    const started = await begun(assistant, long);
     expect(assistant.begin(task)).toBeNull();
-    expect(started.wait()!.map((array) => array.length)).toEqual(sizesOf(task));
+    expect(started.wait()!.map((array) => array.length)).toEqual(sizesOf(long));
     const own = { ...task, columns: [new Float64Array(rows), new Float64Array(rows)] } as RowTask;
     expect(assistant.begin(own)).toBeNull();
     assistant.end();
