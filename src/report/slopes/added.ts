@@ -4,7 +4,7 @@ import { fixed, significant } from "../digits";
 import { outcomeScaleOf } from "../scale";
 import { comparedGroups, decimalsOf, direction, intervalPhrase } from "../wording/difference";
 import type { Voice } from "../wording/difference";
-import { sayDrawn, sayLeft, slopesWords } from "../wording/slopesSection";
+import { sayDrawn, sayLeft, slopesWords } from "../wording/slopesPlots";
 import { placesAxis, valuesAxis } from "./axes";
 import { fewOf, NOTHING_DRAWN } from "./pieces";
 import type { Plot } from "./presentation";

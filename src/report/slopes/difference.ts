@@ -2,8 +2,8 @@ import type { AlongFigure, DifferenceCurve, Interval } from "../../engine/figure
 import { decimalsFor, fixed, significant } from "../digits";
 import { columnName, rowsName, word } from "../names";
 import type { Voice } from "../wording/difference";
-import { placeText, sayCourse, saySign, saySpot, slopesWords } from "../wording/slopesSection";
-import type { Spot } from "../wording/slopesSection";
+import { placeText, sayCourse, saySign, saySpot, slopesWords } from "../wording/slopesPlots";
+import type { Spot } from "../wording/slopesPlots";
 import { placesAxis, valuesAxis } from "./axes";
 import { crossingMarks, sharedMarks } from "./marks";
 import { bandsOf, curvesOf, fewOf, NOTHING_DRAWN } from "./pieces";

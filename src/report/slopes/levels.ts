@@ -2,7 +2,7 @@ import type { LevelDifference } from "../../engine/figure/types";
 import { decimalsFor, fixed } from "../digits";
 import { columnName, word } from "../names";
 import type { Voice } from "../wording/difference";
-import { placeText, saySpot, slopesWords } from "../wording/slopesSection";
+import { placeText, saySpot, slopesWords } from "../wording/slopesPlots";
 import { valuesAxis } from "./axes";
 import { NOTHING_DRAWN } from "./pieces";
 import type { Plot } from "./presentation";

@@ -1,5 +1,5 @@
 import type { AlongFigure } from "../../engine/figure/types";
-import { slopesWords } from "../wording/slopesSection";
+import { slopesWords } from "../wording/slopesPlots";
 import type { Mark } from "./presentation";
 
 /** The ends of what all groups share, where they lie inside the modifier's range. */

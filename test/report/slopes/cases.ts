@@ -32,6 +32,7 @@ export const CASES: Readonly<Record<string, Case>> = {
   "groups whose slopes differ": sample("glazing"),
   "another modifier than the one that differs": { ...sample("glazing"), choice: { modifier: "floor_m2" } },
   "groups whose slopes agree, a set of one column": { ...sample("heating"), choice: { set: 1, modifier: "floor_m2" } },
+  "a modifier that the set does not hold": { ...sample("heating"), choice: { set: 2, modifier: "floor_m2" } },
   "a category": { ...sample("heating"), choice: { modifier: "tenure" } },
   "three groups, the second contrast": {
     ...openData("anorexia", {
