@@ -2,6 +2,7 @@ import type { Crossing } from "../comparison";
 import type { ContrastColumn, Design } from "../design/types";
 import { quadratic } from "../errors/quadratic";
 import { tCritical } from "../probability";
+import { countBelow, sortedValues } from "./sorted";
 import type { InteractionFit } from "./types";
 
 /** A straight group difference a + b·f along the (centred, scaled) modifier f, with its covariance and the way back to the modifier's units. */
@@ -55,9 +56,7 @@ export function straightOf(design: Design, { fit, cov, modifiers }: InteractionF
 export function crossingOf(line: Straight, modifier: string, values: Float64Array, level: number): Crossing | null {
   const at = line.back(-line.a / line.b);
   if (!Number.isFinite(at)) return null;
-  let below = 0;
-  for (const value of values) if (value < at) below++;
-  const share = values.length > 0 ? below / values.length : 0;
+  const share = values.length > 0 ? countBelow(sortedValues(values), at) / values.length : 0;
   return { modifier, value: at, interval: fieller(line, level), below: share, above: 1 - share };
 }
 

@@ -4,6 +4,7 @@ import type { ContrastColumn, Design } from "../design/types";
 import type { Plan } from "../plan";
 import { combine, contrastAt, intervalOf } from "./fit";
 import { levelsOf, rangeOf } from "./range";
+import { sortedValues } from "./sorted";
 import type { InteractionFit } from "./types";
 
 /** Profiles of a full grid; with more, one modifier moves at a time. */
@@ -63,7 +64,7 @@ function stopsOf(design: Design, name: string, stated: readonly (number | string
 /** Median of a numeric modifier, commonest level of a category. */
 export function middleOf(design: Design, name: string): Stop {
   const values = design.modifierValues.get(name)!;
-  if (values.kind === "amount") return { value: quantile(Float64Array.from(values.values).sort(), 0.5), supported: true };
+  if (values.kind === "amount") return { value: quantile(sortedValues(values.values), 0.5), supported: true };
   const counts = values.levels.map(() => 0);
   for (const code of values.codes) counts[code]++;
   return { value: values.levels[counts.indexOf(Math.max(...counts))], supported: true };

@@ -1,5 +1,6 @@
 import { quantile } from "../design/quantile";
 import type { Design, ModifierValues } from "../design/types";
+import { sortedValues } from "./sorted";
 
 /** Where a numeric modifier is looked at. */
 export interface Range {
@@ -21,7 +22,7 @@ export function rangeOf(design: Design, values: Float64Array): Range {
 }
 
 function findRange(design: Design, values: Float64Array): Range {
-  const sorted = Float64Array.from(values).sort();
+  const sorted = sortedValues(values);
   const [first, last] = [sorted[0], sorted[sorted.length - 1]];
   const shared = sharedRange(design, values, first, last);
   const p = [0.1, 0.5, 0.9].map((share) => quantile(sorted, share));

@@ -4,6 +4,7 @@ import { fQuantileUpper, tCritical } from "../probability";
 import { quadraticRoots, straightOf } from "./crossing";
 import { combine, contrastAt } from "./fit";
 import { rangeOf } from "./range";
+import { countBelow, sortedValues } from "./sorted";
 import type { InteractionFit } from "./types";
 
 /** Points between which a curve's bands are searched for a crossing of zero; each found one is narrowed by bisection. */
@@ -20,7 +21,7 @@ export function regionsOf(design: Design, interaction: InteractionFit, contrast:
   const { shared } = rangeOf(design, values.values);
   const critical = criticalsOf(design, interaction, contrast, modifier, level);
   if (!shared || !critical) return [];
-  const sorted = Float64Array.from(values.values).sort();
+  const sorted = sortedValues(values.values);
   return (["pointwise", "simultaneous"] as const).flatMap((band) => {
     const signAt = (value: number) => bandSign(design, interaction, contrast, modifier, value, critical[band]);
     const cuts = cutsOf(design, interaction, contrast, shared, critical[band], signAt);
@@ -114,7 +115,6 @@ function bisect(from: number, to: number, sign: 1 | -1 | 0 | null, signAt: (valu
 
 /** Share of the rows with from ≤ value < to (the last region's end included). */
 function shareIn(sorted: Float64Array, from: number, to: number, last: boolean): number {
-  let count = 0;
-  for (const value of sorted) if (value >= from && (value < to || (last && value <= to))) count++;
+  const count = countBelow(sorted, to, last) - countBelow(sorted, from);
   return count / sorted.length;
 }

@@ -10,7 +10,7 @@ export interface Place {
   readonly targets: readonly number[];
   readonly outcome: number;
   readonly leverage: number;
-  /** Free room for q + 3 columns. */
+  /** Free room for q + 4 columns. */
   readonly room: number;
   readonly height: number;
 }
@@ -43,12 +43,12 @@ export function finishMany(
     w[h + i] = influence;
   }
   sums.gap[finish.model] = gap - 1;
-  addMeat(w, at, q, scaled, height, sums.meat, finish.model);
+  addMeat(kernels, at, q, scaled, height, sums.meat, finish.model);
   if (base) addShift(w, at, q, { influence: h, height }, finish, base, sums.shift);
 }
 
 function addMeat(
-  w: Float64Array,
+  kernels: Kernels,
   at: (a: number) => number,
   q: number,
   scaled: number,
@@ -57,14 +57,10 @@ function addMeat(
   model: number,
 ): void {
   let place = (model * q * (q + 1)) / 2;
+  const product = at(q + 3);
   for (let a = 0; a < q; a++) {
-    const x = at(a);
-    for (let b = 0; b <= a; b++) {
-      const y = at(b);
-      let sum = 0;
-      for (let i = 0; i < height; i++) sum += w[x + i] * w[y + i] * w[scaled + i];
-      meat[place++] += sum;
-    }
+    kernels.multiply(product, at(a), scaled, height);
+    for (let b = 0; b <= a; b++) meat[place++] += kernels.dot(product, at(b), height);
   }
 }
 

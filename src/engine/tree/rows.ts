@@ -114,8 +114,8 @@ interface Layout {
 function layOut({ program: { columns, targets: q, depth, models }, source }: WalkTask): Layout {
   const level = (columns.length + 2) * BLOCK;
   const room = (depth + 1) * level;
-  const base = (source.base ?? []).map((_, a) => room + (q + 3 + a) * BLOCK);
-  const results = room + (q + 3 + base.length) * BLOCK;
+  const base = (source.base ?? []).map((_, a) => room + (q + 4 + a) * BLOCK);
+  const results = room + (q + 4 + base.length) * BLOCK;
   return { level, outcome: columns.length * BLOCK, room, base, results, orders: results + models * RESULT };
 }
 
