@@ -2,6 +2,9 @@ import type { Question } from "../engine/comparison";
 import type { Plan } from "../engine/plan";
 import { oneLine } from "./names";
 
+/** Ratios beyond this, or below its inverse, are said and drawn as this: with an axis' room around them they stay in double range. */
+const LARGEST = 1e280;
+
 /** How estimates are said: as they are, in percentage points (two-valued outcome), or in percent (log outcome). */
 export interface Scale {
   /** An estimate, interval end or shift on the scale that is printed. */
@@ -19,8 +22,8 @@ export function scaleOf(question: Question, plan: Plan): Scale {
   const what = question.kind === "groups" ? "difference" : "slope";
   if (question.outcomeForm === "log") {
     return {
-      show: (value) => 100 * Math.expm1(value),
-      showError: (error, near) => (error === null ? null : 100 * Math.exp(near) * error),
+      show: (value) => Math.min(LARGEST, 100 * Math.expm1(value)),
+      showError: (error, near) => (error === null ? null : Math.min(LARGEST, 100 * Math.exp(near) * error)),
       unit: "%",
       head: `${what} (percent)`,
     };
@@ -50,8 +53,12 @@ export function outcomeScaleOf(question: Question, plan: Plan): OutcomeScale {
     return { show, showError, unit: question.outcomeKind === "binary" ? "%" : unit, log: false };
   }
   const unit = plan.outcome.unit ? oneLine(plan.outcome.unit) : "";
-  const showError = (error: number | null, near: number) => (error === null ? null : Math.exp(near) * error);
-  return { show: Math.exp, showError, unit, log: true };
+  return {
+    show: (value) => Math.min(LARGEST, Math.max(1 / LARGEST, Math.exp(value))),
+    showError: (error, near) => (error === null ? null : Math.min(LARGEST, Math.exp(near) * error)),
+    unit,
+    log: true,
+  };
 }
 
 /** "212 kWh per winter", "3.1 %", "4.2 percentage points", "212". */

@@ -70,6 +70,20 @@ describe("whatever the data", () => {
   });
 });
 
+it("a ratio beyond double range is said on every surface", () => {
+  const g = Array.from({ length: 12 }, (_, i) => (i % 2 ? "a" : "b"));
+  const table = tableOf({
+    g,
+    y: g.map((level, i) => (level === "a" ? 1e-320 : 1e300) * (1 + i / 20)),
+    x: g.map((_, i) => (i * 7) % 5),
+  });
+  const plan = planOf("y", "g", ["x"], { outcome: { column: "y", form: "log" }, exposure: { column: "g", reference: "a" } });
+  const comparison = compare(table, plan);
+  expect(Math.abs((comparison.sets[1].contrasts[0].readout as { estimate: number }).estimate)).toBeGreaterThan(710);
+  const outputs = outputsOf(comparison, plan);
+  for (const surface of ["markdown", "text", "table", "csv"]) expect(outputs[surface], surface).not.toMatch(NEVER);
+});
+
 /** Character references as a browser reads them. */
 const NAMED: Record<string, string> = { amp: "&", lt: "<", gt: ">" };
 const decoded = (text: string) =>

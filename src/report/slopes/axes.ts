@@ -4,6 +4,8 @@ import type { PlotAxis } from "./presentation";
 
 /** A logarithmic axis with fewer round ticks than this takes evenly spaced ones. */
 const FEWEST_TICKS = 3;
+/** Powers of ten a logarithmic axis has room for. */
+const MOST_POWERS = 8;
 
 /** The axis of a modifier: from its smallest to its largest value, ticks between. */
 export function placesAxis(label: string, [from, to]: readonly [number, number], log: boolean): PlotAxis {
@@ -18,7 +20,8 @@ export function valuesAxis(label: string, values: readonly number[], log = false
   if (low > high) return null;
   if (log && low > 0) {
     // a little room beyond the ends, on a scale of ratios
-    const [from, to] = low === high ? [low / 2, high * 2] : [low * (low / high) ** 0.03, high * (high / low) ** 0.03];
+    const room = low === high ? Math.LN2 : 0.03 * (Math.log(high) - Math.log(low));
+    const [from, to] = [Math.exp(Math.log(low) - room), Math.exp(Math.log(high) + room)];
     const ticks = logTicks(from, to);
     return {
       label,
@@ -33,11 +36,12 @@ export function valuesAxis(label: string, values: readonly number[], log = false
   return { label, from, to, ticks, log: false };
 }
 
-/** 1, 2 and 5 times the powers of ten between two positive ends. */
+/** 1, 2 and 5 times the powers of ten between two positive ends, or powers alone where these are many. */
 function logTicks(from: number, to: number): { at: number; text: string }[] {
   const [first, last] = [Math.floor(Math.log10(from)), Math.ceil(Math.log10(to))];
-  const powers = Array.from({ length: last - first + 1 }, (_, i) => first + i);
-  const steps = powers.length > 4 ? [1] : [1, 2, 5];
+  const stride = Math.ceil((last - first) / MOST_POWERS);
+  const powers = Array.from({ length: Math.floor((last - first) / stride) + 1 }, (_, i) => first + i * stride);
+  const steps = powers.length > 4 || stride > 1 ? [1] : [1, 2, 5];
   return powers
     .flatMap((power) => steps.map((step) => Number(`${step}e${power}`)))
     .filter((at) => at >= from && at <= to)

@@ -2,33 +2,9 @@ import { describe, expect, it } from "vitest";
 import { compare } from "../../../src/engine/compare";
 import type { Plan } from "../../../src/engine/plan";
 import { chosenOf } from "../../../src/report/slopes/choice";
-import type { Plot } from "../../../src/report/slopes/presentation";
 import { planOf, seeded, tableOf } from "../../engine/fixtures";
 import { CASES, sectionOf } from "./cases";
-
-const numbersIn = (value: unknown, path = ""): [string, number][] =>
-  typeof value === "number"
-    ? [[path, value]]
-    : value !== null && typeof value === "object"
-      ? Object.entries(value).flatMap(([key, inner]) => numbersIn(inner, `${path}.${key}`))
-      : [];
-const rising = (values: readonly number[]) => values.every((value, i) => i === 0 || value >= values[i - 1]);
-
-function expectWhole(plot: Plot): void {
-  for (const { x, y } of plot.curves) expect([x.length, rising(x)]).toEqual([y.length, true]);
-  for (const { x, low, high } of plot.bands) {
-    expect([low.length, high.length]).toEqual([x.length, x.length]);
-    low.forEach((value, i) => expect(value).toBeLessThanOrEqual(high[i]));
-  }
-  for (const { x, y, lines } of plot.points) expect([x.length, x.length]).toEqual([y.length, lines.length]);
-  expect(rising(plot.stops.map((stop) => stop.x))).toBe(true);
-  expect(plot.stops.length).toBeGreaterThan(0);
-  for (const row of plot.twin.rows) expect(row.length).toBe(plot.twin.head.length);
-  const drawn = [...plot.bands.flatMap((b) => [...b.low, ...b.high]), ...plot.points.flatMap((p) => p.y)];
-  expect(Math.min(...drawn, plot.y.to)).toBeGreaterThanOrEqual(plot.y.from);
-  expect(Math.max(...drawn, plot.y.from)).toBeLessThanOrEqual(plot.y.to);
-  for (const { at } of [...plot.x.ticks]) expect(at >= plot.x.from && at <= plot.x.to).toBe(true);
-}
+import { expectWhole, numbersIn } from "./whole";
 
 describe("every section", () => {
   for (const [name, wanted] of Object.entries(CASES)) {
