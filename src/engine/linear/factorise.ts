@@ -45,7 +45,7 @@ function foldTriangle(r: Float64Array, other: Float64Array, q: number): void {
     const height = Math.min(BLOCK, q - start);
     w.fill(0, 0, q * BLOCK);
     for (let i = 0; i < height; i++) for (let j = start + i; j < q; j++) w[j * BLOCK + i] = other[(start + i) * q + j];
-    foldBlock(k, r, q, height + (height % 2));
+    foldBlock(k, r, q, height + (height % 2), q);
   }
 }
 
@@ -77,13 +77,17 @@ export function factorRows(
       }
       if (weights) for (let i = 0; i < height; i++) w[at + i] *= Math.sqrt(weights[start + i]);
     }
-    foldBlock(k, r, q, height + (height % 2));
+    // what m rows hold is used up after m columns: beyond them stands rounding
+    foldBlock(k, r, q, height + (height % 2), Math.min(q, start + height - from));
   }
 }
 
-/** Replaces R (row-major q × q, upper) by the R of [R; block]; column c of the block stands at c·BLOCK of the buffer, `height` rows, an even number. */
-function foldBlock(kernel: Kernels, r: Float64Array, q: number, height: number): void {
-  for (let j = 0; j < q; j++) {
+/**
+ * Replaces R (row-major q × q, upper) by the R of [R; block]; column c of the block stands at c·BLOCK of the buffer, `height` rows, an even
+ * number. @param rank rows that R and block are made of, at most q
+ */
+function foldBlock(kernel: Kernels, r: Float64Array, q: number, height: number, rank: number): void {
+  for (let j = 0; j < rank; j++) {
     const at = j * BLOCK;
     const below = kernel.dot(at, at, height);
     if (below === 0) continue;

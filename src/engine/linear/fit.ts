@@ -23,38 +23,40 @@ export function fitColumns(factor: Factor, wanted: readonly number[], outcome = 
   const { size, r, scale } = factor;
   const q = size + 1;
   const p = wanted.length;
-  // Work matrix: wanted columns and the outcome, column-major, q rows each.
-  const work = new Float64Array((p + 1) * q);
+  // R has no more rows than it was made from, and no rank beyond them.
+  const height = Math.min(q, factor.n);
+  // Work matrix: wanted columns and the outcome, column-major, `height` rows each.
+  const work = new Float64Array((p + 1) * height);
   [...wanted, outcome].forEach((c, k) => {
-    for (let i = 0; i <= c; i++) work[k * q + i] = r[i * q + c];
+    for (let i = 0; i <= c && i < height; i++) work[k * height + i] = r[i * q + c];
   });
   const kept: number[] = [];
   const setAside: { column: number; combinationOf: number[] }[] = [];
   for (let k = 0; k < p; k++) {
     const row = kept.length;
-    const left = tailNorm(work, k * q, row, q);
-    const whole = Math.hypot(left, headNorm(work, k * q, row));
-    if (whole === 0 || left <= DEPENDENT * whole || row >= q) {
-      setAside.push({ column: wanted[k], combinationOf: dependence(work, q, kept, k).map((i) => wanted[i]) });
+    const left = tailNorm(work, k * height, row, height);
+    const whole = Math.hypot(left, headNorm(work, k * height, row));
+    if (whole === 0 || left <= DEPENDENT * whole || row >= height) {
+      setAside.push({ column: wanted[k], combinationOf: dependence(work, height, kept, k).map((i) => wanted[i]) });
       continue;
     }
-    reflect(work, q, k, row, left, p);
+    reflect(work, height, k, row, left, p);
     kept.push(k);
   }
   const size2 = kept.length;
   const triangle = new Float64Array(size2 * size2);
   kept.forEach((k, column) => {
-    for (let i = 0; i <= column; i++) triangle[i * size2 + column] = work[k * q + i];
+    for (let i = 0; i <= column; i++) triangle[i * size2 + column] = work[k * height + i];
   });
   const columns = kept.map((k) => wanted[k]);
   const inverse = invertUpper(triangle, size2);
-  const rest = tailNorm(work, p * q, size2, q);
-  const outcomeNorm = Math.hypot(rest, headNorm(work, p * q, size2));
+  const rest = tailNorm(work, p * height, size2, height);
+  const outcomeNorm = Math.hypot(rest, headNorm(work, p * height, size2));
   const outcomeScale = scale[outcome];
   const coefficients = new Float64Array(size2);
   for (let i = 0; i < size2; i++) {
     let sum = 0;
-    for (let j = i; j < size2; j++) sum += inverse[i * size2 + j] * work[p * q + j];
+    for (let j = i; j < size2; j++) sum += inverse[i * size2 + j] * work[p * height + j];
     coefficients[i] = (sum / scale[columns[i]]) * outcomeScale;
   }
   for (let i = 0; i < size2; i++) for (let j = i; j < size2; j++) inverse[i * size2 + j] /= scale[columns[i]];
