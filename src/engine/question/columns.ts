@@ -17,12 +17,14 @@ export function isAmount(column: Column): column is NumberColumn {
 /** The distinct values of a numeric column, ascending; stops beyond `limit` and returns null. */
 export function distinctValues(values: Float64Array, limit: number): number[] | null {
   const seen = new Set<number>();
-  let [last, before] = [NaN, NaN];
+  let last = NaN;
+  let before = NaN;
   for (let i = 0; i < values.length; i++) {
     const value = values[i];
     // the two values seen last need no looking up: groups coded 0 and 1
     if (value === last || value === before || value !== value) continue;
-    [last, before] = [value, last];
+    before = last;
+    last = value;
     seen.add(value === 0 ? 0 : value); // −0 is 0
     if (seen.size > limit) return null;
   }
@@ -44,11 +46,10 @@ function numberGroups(column: NumberColumn): Groups {
   const place = new Map(distinct.map((value, at) => [value, at]));
   const { values } = column;
   const codes = new Int32Array(values.length);
-  let [last, code] = [NaN, -1];
+  const [first, second] = distinct;
   for (let i = 0; i < values.length; i++) {
     const value = values[i];
-    if (value !== last) [last, code] = [value, value !== value ? -1 : place.get(value === 0 ? 0 : value)!];
-    codes[i] = code;
+    codes[i] = value === first ? 0 : value === second ? 1 : value !== value ? -1 : place.get(value === 0 ? 0 : value)!;
   }
   return { levels: distinct.map(String), codes };
 }

@@ -77,15 +77,16 @@ class Losses {
   /** 1 for each row lost to any column so far. */
   rows(): Uint8Array {
     const all = new Uint8Array(this.n);
-    for (const lost of this.lost.values()) for (let i = 0; i < all.length; i++) all[i] |= lost[i];
+    for (const lost of this.lost.values()) if (lost.includes(1)) for (let i = 0; i < all.length; i++) all[i] |= lost[i];
     return all;
   }
 
   byColumn(): RowCount["droppedBy"] {
     return [...this.lost].flatMap(([column, lost]) => {
+      if (!lost.includes(1)) return [];
       let rows = 0;
       for (let i = 0; i < lost.length; i++) rows += lost[i];
-      return rows > 0 ? [{ column, rows }] : [];
+      return [{ column, rows }];
     });
   }
 }
@@ -152,7 +153,9 @@ function patternsOf(
       pattern[i] = to;
     }
   }
-  for (let i = 0; i < n; i++) if (pattern[i] >= 0) patterns[pattern[i]].rows++;
+  const counts = new Float64Array(patterns.length);
+  for (let i = 0; i < n; i++) if (pattern[i] >= 0) counts[pattern[i]]++;
+  patterns.forEach((each, i) => (each.rows = counts[i]));
   return { pattern, patterns };
 }
 
