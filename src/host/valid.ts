@@ -16,6 +16,7 @@ const CHANGES: Readonly<Record<string, Check>> = {
   reference: (change) => text(change["level"]),
   covariates: (change) => texts(change["columns"]),
   margin: ({ value }) => value === null || (finite(value) && (value as number) > 0),
+  average: ({ over }) => over === null || text(over),
   per: ({ value }) => finite(value) && (value as number) > 0,
   sets: ({ sets }) => sets === "each" || sets === "steps" || sets === "every",
   report: (change) => texts(change["columns"]),

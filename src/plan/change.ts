@@ -10,6 +10,8 @@ export type PlanChange =
   | { readonly key: "reference"; readonly level: string }
   | { readonly key: "covariates"; readonly columns: readonly string[] }
   | { readonly key: "margin"; readonly value: number | null }
+  /** Rows to average over where slopes differ: "all rows", an exposure group, or none. */
+  | { readonly key: "average"; readonly over: string | null }
   | { readonly key: "per"; readonly value: number }
   | { readonly key: "sets"; readonly sets: "each" | "steps" | "every" }
   | { readonly key: "report"; readonly columns: readonly string[] };
@@ -31,6 +33,8 @@ export function applyChange(plan: Plan, change: PlanChange, table?: Table): Plan
       return changeCovariates(plan, change.columns);
     case "margin":
       return { ...plan, margin: change.value };
+    case "average":
+      return change.over === null ? without(plan, "average") : { ...plan, average: change.over };
     case "per":
       return { ...plan, exposure: { ...plan.exposure, per: change.value } };
     case "sets":

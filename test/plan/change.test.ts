@@ -24,6 +24,8 @@ describe("a change to a plan", () => {
   test("leaves the plan it came from as it was, and everything it does not touch", () => {
     const before = JSON.stringify(plan);
     expect(applyChange(plan, { key: "margin", value: null })).toEqual({ ...plan, margin: null });
+    expect(applyChange(plan, { key: "average", over: "all rows" })).toEqual({ ...plan, average: "all rows" });
+    expect(applyChange({ ...plan, average: "full" }, { key: "average", over: null })).not.toHaveProperty("average");
     expect(applyChange(plan, { key: "reference", level: "full" }).exposure).toEqual({ column: "retrofit", reference: "full" });
     expect(applyChange(plan, { key: "per", value: 10 }).exposure.per).toBe(10);
     expect(applyChange(plan, { key: "report", columns: ["tenure"] })).toEqual({ ...plan, report: ["tenure"] });

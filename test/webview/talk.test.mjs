@@ -58,6 +58,19 @@ test("a margin is sent on Enter or when the field is left, once, and only if it 
   assert.deepEqual(sent, [choose({ key: "margin", value: 200 }), choose({ key: "margin", value: null })]);
 });
 
+test("an average over stated rows can be asked for where slopes differ, and only there", async () => {
+  const sent = await sends(STATES.varies, async (page) => {
+    const over = page.locator("[data-role=average]");
+    assert.deepEqual(await over.locator("option").allInnerTexts(), ["no rows", "all rows", "full", "none", "part"]);
+    await over.selectOption("all rows");
+    await over.selectOption({ label: "no rows" });
+  });
+  assert.deepEqual(sent, [choose({ key: "average", over: "all rows" }), choose({ key: "average", over: null })]);
+  const open = await browser.open({ state: STATES["two groups"] });
+  assert.equal(await open.page.locator("[data-role=average]").count(), 0);
+  await open.close();
+});
+
 test("a covariate is found and added by keyboard alone, among 60 columns, and the focus comes back", async () => {
   const sent = await sends(STATES["60 columns"], async (page) => {
     await page.locator(".add").focus();

@@ -7,20 +7,27 @@ import { numberField } from "./numberField";
 import { picker } from "./picker";
 import { select } from "./select";
 
+/** Value of the choice that asks for no average; no group is named so, since cells are trimmed. */
+const NO_ROWS = " ";
+/** As the plan writes it. */
+const ALL_ROWS = "all rows";
+
 /** The question as a sentence whose words are chosen in place. */
 export function drawQuestion(part: HTMLElement, facts: HTMLElement, { state, choose }: View): void {
   const { question, file } = state;
+  // asked for where there is no single number, and shown as long as it is asked for
+  const differs = state.presentation?.blocks.some(({ rows }) => rows.some(({ kind }) => kind === "varies")) ?? false;
   part.hidden = false;
   part.dataset["focusNext"] = "add";
-  redraw(part, [question && { ...question, setsChoice: null, setCount: null }, file], () => {
+  redraw(part, [question && { ...question, setsChoice: null, setCount: null }, file, differs], () => {
     const sentence = question
-      ? sentences(question, choose)
+      ? sentences(question, differs, choose)
       : [el("p", { class: "quiet" }, "The question follows once the file has been read.")];
     return [head("question", "Question"), el("div", { class: "body" }, ...sentence, facts)];
   });
 }
 
-function sentences(question: QuestionState, choose: View["choose"]): HTMLElement[] {
+function sentences(question: QuestionState, differs: boolean, choose: View["choose"]): HTMLElement[] {
   const { plan, columns, levels, reference, kind } = question;
   const exposure = columnSelect("exposure", "Exposure", columns, plan.exposure.column, "notExposure", (column) =>
     choose({ key: "exposure", column }),
@@ -67,7 +74,18 @@ function sentences(question: QuestionState, choose: View["choose"]): HTMLElement
     el("p", { class: "question" }, ...spaced.filter((item) => item !== null).flatMap((item) => [item, " "])),
     add.list,
     el("p", { class: "question margin" }, "A difference of ", marginField(question, choose), ` ${unit(question)}would matter.`),
+    ...(differs || plan.average ? [averageLine(question, choose)] : []),
   ];
+}
+
+/** Which rows to average over where slopes differ; none unless asked for. */
+function averageLine({ plan, kind, levels }: QuestionState, choose: View["choose"]): HTMLElement {
+  const rows = [NO_ROWS, ALL_ROWS, ...(kind === "groups" ? levels : [])];
+  const choices = rows.map((over) => ({ value: over, text: over === NO_ROWS ? "no rows" : over, disabled: false }));
+  const list = select("average", "Rows to average over where slopes differ", choices, plan.average ?? NO_ROWS, (over) =>
+    choose({ key: "average", over: over === NO_ROWS ? null : over }),
+  );
+  return el("p", { class: "question margin" }, "Where slopes differ, average over ", list, ".");
 }
 
 function marginField({ plan }: QuestionState, choose: View["choose"]): HTMLElement {
