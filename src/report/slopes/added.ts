@@ -54,7 +54,7 @@ export function addedPlot(voice: Voice, set: Comparison["sets"][number], readout
         note: sayDrawn(added.points.x.length, added.points.of, plan),
       },
     ],
-    marks: [{ axis: "y", at: 0, stretch: null, label: slopesWords.mean }],
+    marks: [{ what: "zero", axis: "y", at: 0, stretch: null, label: slopesWords.mean }],
     stops: x.map((value, i) => ({
       x: value,
       y: line[i],

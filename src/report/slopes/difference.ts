@@ -64,7 +64,7 @@ export function differencePlot(voice: Voice, along: AlongFigure, differs: boolea
       curves,
       densities: along.densities,
       marks: [
-        { axis: "y", at: 0, stretch: null, label: slopesWords.zero(voice) },
+        { what: "zero", axis: "y", at: 0, stretch: null, label: slopesWords.zero(voice) },
         ...(differs ? crossingMarks(along) : []),
         ...sharedMarks(along),
       ],

@@ -54,7 +54,7 @@ export function levelsPlot(voice: Voice, modifier: string, levels: readonly Leve
         high: level.interval && scale.show(level.interval[1]),
         text: texts[x],
       })),
-      marks: [{ axis: "y", at: 0, stretch: null, label: slopesWords.zero(voice) }],
+      marks: [{ what: "zero", axis: "y", at: 0, stretch: null, label: slopesWords.zero(voice) }],
       stops: drawn.map(({ estimate }, x) => ({ x, y: scale.show(estimate), text: texts[x] })),
       twin: {
         head: [name, scale.head, slopesWords.pointwise(comparison.question.level)],

@@ -5,10 +5,10 @@ import type { Mark } from "./presentation";
 /** The ends of what all groups share, where they lie inside the modifier's range. */
 export function sharedMarks({ shared, range }: AlongFigure): Mark[] {
   if (!shared) return [];
-  const at = (value: number, label: string): Mark => ({ axis: "x", at: value, stretch: null, label });
+  const at = (what: Mark["what"], value: number, label: string): Mark => ({ what, axis: "x", at: value, stretch: null, label });
   return [
-    ...(shared[0] > range[0] ? [at(shared[0], slopesWords.sharedFrom)] : []),
-    ...(shared[1] < range[1] ? [at(shared[1], slopesWords.sharedTo)] : []),
+    ...(shared[0] > range[0] ? [at("shared from", shared[0], slopesWords.sharedFrom)] : []),
+    ...(shared[1] < range[1] ? [at("shared to", shared[1], slopesWords.sharedTo)] : []),
   ];
 }
 
@@ -18,5 +18,5 @@ export function crossingMarks({ crossing, range: [from, to] }: AlongFigure): Mar
   const { kind, low, high } = crossing.interval;
   const stretch: Mark["stretch"] =
     kind === "between" ? [Math.max(from, low ?? from), Math.min(to, high ?? to)] : kind === "everywhere" ? [from, to] : null;
-  return [{ axis: "x", at: crossing.value, stretch, label: slopesWords.crossing(crossing.value) }];
+  return [{ what: "crossing", axis: "x", at: crossing.value, stretch, label: slopesWords.crossing(crossing.value) }];
 }

@@ -108,6 +108,8 @@ export interface IntervalMark {
 }
 
 export interface Mark {
+  /** The zero line; where the difference changes sign; the first and the last value at which every group has rows. */
+  readonly what: "zero" | "crossing" | "shared from" | "shared to";
   readonly axis: "x" | "y";
   readonly at: number;
   /** A stretch of the axis (the crossing's interval), or null for a line alone; ends beyond the axis are cut. */
