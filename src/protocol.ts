@@ -1,7 +1,7 @@
 import type { Plan } from "./engine/plan";
 import type { PlanChange } from "./plan/change";
 import type { Presentation } from "./report/presentation";
-import type { SlopesChoice, SlopesSection } from "./report/slopes/presentation";
+import type { Plot, SlopesChoice, SlopesSection } from "./report/slopes/presentation";
 
 /**
  * The typed messages between the extension host and the panel's page: the only file both sides import.
@@ -25,7 +25,7 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   | { readonly type: "slopes"; readonly choice: SlopesChoice | null }
 );
 
-export type { PlanChange, SlopesChoice, SlopesSection };
+export type { PlanChange, Plot, SlopesChoice, SlopesSection };
 
 /** Sets that hold all of `holds` and none of `omits`; null asks for no extra rows. */
 export type SetFilter = { readonly holds: readonly string[]; readonly omits: readonly string[] } | null;

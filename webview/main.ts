@@ -6,6 +6,7 @@ import { drawQuestion } from "./sections/question";
 import { drawFacts, tickAge } from "./sections/facts";
 import { drawReadout } from "./sections/readout";
 import { drawShifts, showCopied } from "./sections/shifts";
+import { drawSlopes } from "./sections/slopes";
 import { drawNotes } from "./sections/notes";
 import { drawStatus } from "./sections/status";
 import { announcement, foresee, readKept } from "./state";
@@ -21,12 +22,12 @@ let announced: string | null = null;
 
 const page = document.querySelector<HTMLElement>("#panel") ?? document.body.appendChild(el("main", { id: "panel" }));
 const status = el("div", { class: "status" });
-const [question, readout, shifts, notes] = ["question", "readout", "shifts", "notes"].map((name) =>
+const [question, readout, shifts, slopes, notes] = ["question", "readout", "shifts", "slopes", "notes"].map((name) =>
   el("section", { "data-section": name, "aria-labelledby": `head-${name}`, hidden: true }),
 );
 const facts = el("p", { class: "facts" });
 const live = el("p", { class: "unseen", "aria-live": "polite" });
-page.append(el("h1", { class: "unseen" }, "Comparison"), status, question, readout, shifts, notes, live);
+page.append(el("h1", { class: "unseen" }, "Comparison"), status, question, readout, shifts, slopes, notes, live);
 
 function receive(message: HostMessage): void {
   if (message.type === "copied") {
@@ -58,6 +59,11 @@ function draw(): void {
       const others = kept.open.filter((item) => item !== name);
       keep({ open: open ? [...others, name] : others });
     },
+    wanted: () => kept.slopes,
+    want: (change) => {
+      keep({ slopes: { ...kept.slopes, ...change } });
+      draw();
+    },
     copy: (as) => channel.post({ type: "copy", id: ++copies, as }),
   };
   document.body.dataset["status"] = state.status.kind;
@@ -66,6 +72,7 @@ function draw(): void {
   drawFacts(facts, view);
   drawReadout(readout, view);
   drawShifts(shifts, view);
+  drawSlopes(slopes, view);
   drawNotes(notes, view);
 }
 

@@ -1,4 +1,6 @@
 import type { PanelState, PlanChange } from "../src/protocol";
+import { readWanted } from "./slopes/wanted";
+import type { Wanted } from "./slopes/wanted";
 
 /** What the page keeps for itself across hiding and reloading: a hint only, the truth is the host's. */
 export interface Kept {
@@ -7,14 +9,16 @@ export interface Kept {
   readonly scroll: number;
   /** Names of the folded pieces that are open. */
   readonly open: readonly string[];
+  readonly slopes: Wanted;
 }
 
 export function readKept(value: unknown): Kept {
-  const { target, scroll, open } = (typeof value === "object" && value !== null ? value : {}) as Record<string, unknown>;
+  const { target, scroll, open, slopes } = (typeof value === "object" && value !== null ? value : {}) as Record<string, unknown>;
   return {
     target: typeof target === "string" ? target : undefined,
     scroll: typeof scroll === "number" && scroll >= 0 ? scroll : 0,
     open: Array.isArray(open) ? open.filter((name) => typeof name === "string") : [],
+    slopes: readWanted(slopes),
   };
 }
 

@@ -1,5 +1,6 @@
 import type { PanelState, PlanChange } from "../src/protocol";
 import type { Post } from "./channel";
+import type { Wanted } from "./slopes/wanted";
 
 /** What every section is given to draw itself. */
 export interface View {
@@ -9,6 +10,9 @@ export interface View {
   /** Folded pieces. */
   readonly isOpen: (name: string) => boolean;
   readonly setOpen: (name: string, open: boolean) => void;
+  /** What the Slopes section is to show. */
+  readonly wanted: () => Wanted;
+  readonly want: (change: Partial<Wanted>) => void;
   /** Copies the comparison and shows the host's answer beside the buttons. */
   readonly copy: (as: "markdown" | "table") => void;
 }

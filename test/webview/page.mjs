@@ -31,7 +31,11 @@ export async function openBrowser() {
   };
 }
 
-async function openPage(browser, files, { state, theme = "dark", width = 1000, height = 900, kept = null } = {}) {
+/** A state with a figure is one in which a person has opened the section and its tables. */
+const OPENED = { open: ["slopes", "plot lines", "plot difference", "plot levels", "plot added"] };
+
+async function openPage(browser, files, options = {}) {
+  const { state, theme = "dark", width = 1000, height = 900, kept = state?.slopes ? OPENED : null } = options;
   const context = await browser.newContext({ viewport: { width, height }, bypassCSP: false });
   const page = await context.newPage();
   const faults = [];

@@ -1,3 +1,5 @@
+import { figures } from "./figures.mjs";
+
 /** States of the panel, as the host would send them. The sentences stand for the report's; the page only lays them out. */
 const heads = { held: "held fixed", rows: "rows", difference: "difference (kWh per winter)", shift: "shift", word: "in a word" };
 const axis = {
@@ -219,4 +221,5 @@ export const STATES = {
     status: { kind: "unusable", text: "heating.csv, line 214: a quote is opened and never closed.", line: 214, inPlan: false },
   }),
   "nothing to compare": panel({ presentation: null }),
+  ...Object.fromEntries(Object.entries(await figures()).map(([name, shown]) => [name, panel(shown)])),
 };

@@ -10,7 +10,7 @@ export function select(
   chosen: string,
   choose: (value: string) => void,
 ): HTMLElement {
-  const list = el("select", { "data-role": role, "data-focus": role, "aria-label": label, title: chosen });
+  const list = el("select", { "data-role": role, "data-focus": role, "aria-label": label });
   if (!choices.some(({ value }) => value === chosen))
     list.append(el("option", { value: chosen, disabled: true }, chosen || "choose"));
   for (const { value, text, disabled } of choices) {
@@ -18,6 +18,8 @@ export function select(
     list.append(el("option", { value, disabled: disabled && !here }, here && disabled ? value : text));
   }
   list.value = chosen;
+  // a long text is cut off in the closed list
+  list.title = list.selectedOptions[0]?.textContent ?? chosen;
   list.addEventListener("change", () => choose(list.value));
   return list;
 }
