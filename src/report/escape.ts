@@ -37,3 +37,13 @@ export function escapePlain(text: string): string {
 export function escapeFormula(text: string): string {
   return /^\s*[=@+-]/.test(text) ? `'${text}` : text;
 }
+
+/** Text inside an XML element or a quoted attribute. What XML cannot hold at all (control characters, halves of a character) becomes a space. */
+export function escapeXml(text: string): string {
+  return text
+    .replace(
+      /[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]|[\ud800-\udbff](?![\udc00-\udfff])|(?<![\ud800-\udbff])[\udc00-\udfff]/g,
+      " ",
+    )
+    .replace(/[&<>"']/g, (c) => NAMED[c] ?? `&#${c.codePointAt(0)};`);
+}
