@@ -23,9 +23,18 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   | { readonly type: "readAgain" }
   /** What the Slopes section shows; null when it was closed. */
   | { readonly type: "slopes"; readonly choice: SlopesChoice | null }
+  /** Save a figure where a person says. */
+  | { readonly type: "saveFigure"; readonly id: number; readonly figure: SavedFigure }
 );
 
 export type { PlanChange, Plot, SlopesChoice, SlopesSection };
+
+/** A figure as a file: an SVG's text, or a PNG in base64. The name is what it shows, not yet a file's name. */
+export interface SavedFigure {
+  readonly as: "svg" | "png";
+  readonly name: string;
+  readonly data: string;
+}
 
 /** Sets that hold all of `holds` and none of `omits`; null asks for no extra rows. */
 export type SetFilter = { readonly holds: readonly string[]; readonly omits: readonly string[] } | null;
@@ -35,6 +44,8 @@ export type HostMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   | { readonly type: "state"; readonly state: PanelState }
   /** Answer to a `copy`: what the panel says, or why it failed. */
   | { readonly type: "copied"; readonly id: number; readonly ok: boolean; readonly text: string }
+  /** Answer to a `saveFigure`: where it went, or why it did not; "" where a person thought better of it. */
+  | { readonly type: "saved"; readonly id: number; readonly ok: boolean; readonly text: string }
 );
 
 /** The whole truth the page renders. */

@@ -33,8 +33,9 @@ export function openChannel(handle: (message: HostMessage) => void): Channel {
 
 function isHostMessage(data: unknown): data is HostMessage {
   if (typeof data !== "object" || data === null) return false;
-  const { v, type, state, id, text } = data as Record<string, unknown>;
+  const { v, type, state, id, ok, text } = data as Record<string, unknown>;
   if (v !== PROTOCOL_VERSION) return false;
   if (type === "state") return typeof state === "object" && state !== null;
-  return type === "copied" && typeof id === "number" && typeof text === "string";
+  const answer = type === "copied" || type === "saved";
+  return answer && typeof id === "number" && typeof ok === "boolean" && typeof text === "string";
 }

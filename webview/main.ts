@@ -6,6 +6,7 @@ import { drawQuestion } from "./sections/question";
 import { drawFacts, tickAge } from "./sections/facts";
 import { drawReadout } from "./sections/readout";
 import { drawShifts, showCopied } from "./sections/shifts";
+import { showSaved } from "./sections/save";
 import { drawSlopes } from "./sections/slopes";
 import { drawNotes } from "./sections/notes";
 import { drawStatus } from "./sections/status";
@@ -34,6 +35,7 @@ function receive(message: HostMessage): void {
     if (message.id === copies) showCopied(shifts, message.text, message.ok);
     return;
   }
+  if (message.type === "saved") return showSaved(message);
   state = message.state;
   keep({ target: state.target });
   draw();

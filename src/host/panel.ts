@@ -1,10 +1,11 @@
-import { basename } from "node:path";
+import { basename, dirname } from "node:path";
 import * as vscode from "vscode";
 import type { PageMessage, PanelState } from "../protocol";
 import { Channel } from "./channel";
 import { html, pageRoot } from "./html";
 import type { Memory } from "./memory";
 import { openLine } from "./openLine";
+import { saveFigure } from "./saveFigure";
 import { Subject } from "./subject";
 import { watchFile } from "./watch";
 import { words } from "./words";
@@ -113,6 +114,10 @@ export class ComparisonPanel {
         return this.subject.readAgain();
       case "slopes":
         return this.subject.showSlopes(message.choice);
+      case "saveFigure": {
+        const beside = dirname(this.subject.csv ?? this.targetPath);
+        this.channel.post({ type: "saved", id: message.id, ...(await saveFigure(message.figure, beside)) });
+      }
     }
   }
 

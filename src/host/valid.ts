@@ -8,6 +8,11 @@ const text: (value: unknown) => boolean = (value) => typeof value === "string" &
 const texts = (value: unknown) => Array.isArray(value) && value.length <= 10_000 && value.every(text);
 const finite = (value: unknown) => typeof value === "number" && Number.isFinite(value);
 const line = (value: unknown) => Number.isInteger(value) && (value as number) >= 1;
+/** An SVG of thousands of rows is some hundred kB, its picture a few MB. */
+const SVG_MOST = 8_000_000;
+const PNG_MOST = 32_000_000;
+const PNG_START = "iVBORw0KGgo";
+
 const fields = (value: unknown): value is Fields => typeof value === "object" && value !== null && !Array.isArray(value);
 
 const CHANGES: Readonly<Record<string, Check>> = {
@@ -39,7 +44,14 @@ const MESSAGES: Readonly<Record<PageMessage["type"], Check>> = {
   slopes: ({ choice }) =>
     choice === null ||
     (fields(choice) && orNull(place)(choice["set"]) && orNull(text)(choice["modifier"]) && orNull(place)(choice["contrast"])),
+  saveFigure: ({ id, figure }) => finite(id) && fields(figure) && text(figure["name"]) && picture(figure["as"], figure["data"]),
 };
+
+function picture(as: unknown, data: unknown): boolean {
+  if (typeof data !== "string") return false;
+  if (as === "svg") return data.length <= SVG_MOST && data.startsWith("<svg ");
+  return as === "png" && data.length <= PNG_MOST && data.startsWith(PNG_START) && /^[A-Za-z0-9+/]+={0,2}$/.test(data);
+}
 
 /** A message is data from a page: believed only when it has the protocol's version and shape. */
 export function isPageMessage(value: unknown): value is PageMessage {

@@ -8,6 +8,10 @@ export const words = {
   noPanel: "Open a comparison first: right-click a CSV and choose Open Comparison.",
   nothingToCopy: "There is no result to copy yet.",
   copied: { markdown: "Copied as Markdown.", table: "Copied as a table." },
+  saveFigure: "Save the figure",
+  saved: (file: string) => `Saved as ${file}.`,
+  notSaved: (file: string) => `${file} could not be written.`,
+  figure: "figure",
   noLine: (file: string) => `${file} could not be opened in the editor.`,
   threadLost: "the comparison stopped; save the file or choose Read Again to repeat it",
 } as const;

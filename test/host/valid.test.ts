@@ -13,6 +13,8 @@ describe("messages from the page", () => {
       { type: "copy", id: 4, as: "table" },
       { type: "filter", filter: null },
       { type: "slopes", choice: null },
+      { type: "saveFigure", id: 1, figure: { as: "svg", name: "kwh along wind", data: "<svg xmlns='…'></svg>" } },
+      { type: "saveFigure", id: 2, figure: { as: "png", name: "", data: "iVBORw0KGgoAAAA=" } },
       { type: "slopes", choice: { set: null, modifier: null, contrast: null } },
       { type: "slopes", choice: { set: 3, modifier: "floor_m2", contrast: 0 } },
       { type: "filter", filter: { holds: ["a"], omits: [] } },
@@ -48,6 +50,13 @@ describe("messages from the page", () => {
       { v: 1, type: "choose", change: { key: "constructor" } },
       { v: 1, type: "choose", change: { key: "covariates", columns: [1] } },
       { v: 1, type: "filter", filter: { holds: "a", omits: [] } },
+      { v: 1, type: "saveFigure", id: 1 },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "svg", name: "a", data: "<script>" } },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "exe", name: "a", data: "<svg ></svg>" } },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "png", name: "a", data: "<svg ></svg>" } },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "png", name: "a", data: "iVBORw0KGgo\n" } },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "svg", name: 7, data: "<svg ></svg>" } },
+      { v: 1, type: "saveFigure", id: 1, figure: { as: "svg", name: "a", data: "<svg " + "x".repeat(8_000_000) } },
       { v: 1, type: "slopes" },
       { v: 1, type: "slopes", choice: { set: -1, modifier: null, contrast: null } },
       { v: 1, type: "slopes", choice: { set: 0, modifier: 7, contrast: null } },
@@ -57,11 +66,25 @@ describe("messages from the page", () => {
   });
   test("nothing a page can send makes the check throw", () => {
     fc.assert(
-      fc.property(fc.anything(), fc.constantFrom("choose", "copy", "filter", "openLine", "slopes"), (value, type) => {
-        const message = { v: 1, type, change: value, filter: value, line: value, id: value, as: value, choice: value };
-        expect(typeof isPageMessage(value)).toBe("boolean");
-        expect(typeof isPageMessage(message)).toBe("boolean");
-      }),
+      fc.property(
+        fc.anything(),
+        fc.constantFrom("choose", "copy", "filter", "openLine", "slopes", "saveFigure"),
+        (value, type) => {
+          const message = {
+            v: 1,
+            type,
+            change: value,
+            filter: value,
+            line: value,
+            id: value,
+            as: value,
+            choice: value,
+            figure: value,
+          };
+          expect(typeof isPageMessage(value)).toBe("boolean");
+          expect(typeof isPageMessage(message)).toBe("boolean");
+        },
+      ),
     );
   });
 });
