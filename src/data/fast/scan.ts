@@ -6,18 +6,21 @@ import type { Look } from "./look";
 import { takeCodes, takeNumbers } from "./memory";
 import type { ReaderMemory } from "./memory";
 import { POWERS, parseNumber } from "./number";
+import { PlainRows } from "./plain";
 import { readAs } from "./decimals";
 
 /** Digits that one 32-bit integer holds. */
 const SHORT = 9;
 /** Room beyond the rows expected, so that arrays seldom grow. */
 const ROOM = 1.1;
+/** Rows that the compiled loop leaves to the other, beyond which all are: a few, and a share of those read. */
+const [SOME_ODD, ODD] = [64, 0.2];
 /** A column guessed to be numbers with more than this share of other cells will not be one. */
 const GIVE_UP = 0.2;
 
 /**
- * Reads rows of plain bytes into columns. The loop in `scan` does the common cells itself: numbers of up to nine digits and words; the rest go
- * to methods.
+ * Reads rows of plain bytes into columns: those of nothing but common cells by compiled code (PlainRows), the others by `scanRows`, which does
+ * numbers of up to nine digits and words itself and leaves the rest to methods.
  */
 export class Scanner {
   rows = 0;
@@ -65,6 +68,54 @@ export class Scanner {
 
   /** Reads the lines in bytes [from, to); the last of these bytes is a line feed. False where they are not plain. */
   scan(bytes: Uint8Array, from: number, to: number): boolean {
+    // a mark that is a number would have to be looked for among the numbers read
+    const plain = this.missing.numbers.size === 0 ? PlainRows.for(this.look) : null;
+    let at = from;
+    let odd = 0;
+    while (plain && at < to && odd <= SOME_ODD + this.rows * ODD) {
+      const end = plain.load(bytes, at, to);
+      const stop = end > at ? end : bytes.indexOf(LF, at) + 1;
+      while (at < stop) {
+        const rows = end > at ? plain.read(at, end) : 0;
+        if (rows > 0) this.take(plain, bytes, rows);
+        at = rows > 0 ? plain.next : at;
+        if (at === stop || (rows > 0 && plain.full(rows))) continue;
+        // a row for the other loop
+        const after = bytes.indexOf(LF, at) + 1;
+        if (!this.scanRows(bytes, at, after)) return false;
+        at = after;
+        odd++;
+      }
+    }
+    return at >= to || this.scanRows(bytes, at, to);
+  }
+
+  /** Takes over rows that the compiled loop has read. */
+  private take(plain: PlainRows, bytes: Uint8Array, rows: number): void {
+    while (this.rows + rows > this.capacity) this.grow();
+    this.passBlanks();
+    const first = this.rows;
+    for (let c = 0; c < this.width; c++) {
+      if (this.look.numeric[c] === 1) {
+        this.numbers[c].set(plain.numbers(c, rows), first);
+        continue;
+      }
+      const { cells, offset } = plain.words(c, rows);
+      const codes = this.codes[c];
+      const words = this.words[c];
+      for (let i = 0; i < rows; i++) {
+        const start = cells[3 * i] - offset;
+        const end = cells[3 * i + 1] - offset;
+        codes[first + i] = start === end ? -1 : words.code(bytes, start, end, cells[3 * i + 2] & HASH_BITS, first + i);
+      }
+    }
+    for (let i = 0; i < rows; i++) this.lines[first + i] = ++this.line;
+    this.rows += rows;
+    if (plain.marked) this.marked = true;
+  }
+
+  /** As `scan`, a byte at a time. */
+  private scanRows(bytes: Uint8Array, from: number, to: number): boolean {
     const { width } = this;
     const { numeric, separator } = this.look;
     const { mark } = this.look.decimals;

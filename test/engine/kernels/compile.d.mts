@@ -1,1 +1,7 @@
-export function translate(): Promise<string>;
+export interface WatSource {
+  readonly source: string;
+  readonly target: string;
+  readonly name: string;
+}
+export const SOURCES: readonly WatSource[];
+export function translate(source: WatSource): Promise<string>;
