@@ -15,5 +15,11 @@ export function drawFigures(part: HTMLElement, plots: readonly Plot[], view: Vie
     laid.set(part, here);
     part.replaceChildren(...here.figures.map((figure) => figure.root));
   }
-  here.figures.forEach((figure, i) => figure.show(plots[i]));
+  here.figures.forEach((figure, i) => figure.show(plots[i], axisOf(plots[i], plots)));
+}
+
+/** Rows and lines stand over the difference along the same axis. */
+function axisOf(plot: Plot, plots: readonly Plot[]): readonly Plot[] {
+  const along = plots.filter(({ kind }) => kind === "lines" || kind === "difference");
+  return along.includes(plot) ? along : [plot];
 }
