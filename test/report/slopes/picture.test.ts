@@ -79,7 +79,7 @@ describe("a plot as an SVG file", () => {
     const svg = figureSvg({ ...plot, title: hostile, summary: hostile, groups: plot.groups.map(() => hostile) });
     expect(svg).not.toMatch(/<script|<img|\u0000/);
     expect(textsOf(svg)[0]).toBe(hostile.replace(/[\u0000\ud800]/g, " "));
-    expect(svg.isWellFormed()).toBe(true);
+    expect(Buffer.from(svg).toString()).toBe(svg);
   });
 });
 
