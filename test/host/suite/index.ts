@@ -2,6 +2,7 @@ import Mocha from "mocha";
 import { liveSuite } from "./live";
 import { manifestSuite } from "./manifest";
 import { questionSuite } from "./question";
+import { saveSuite } from "./save";
 
 /** The entry VS Code calls in its extension host. Ends with a plain line of counts, which the runner asks for. */
 export function run(): Promise<void> {
@@ -10,6 +11,7 @@ export function run(): Promise<void> {
   manifestSuite();
   questionSuite();
   liveSuite();
+  saveSuite();
   return new Promise((resolve, reject) => {
     const runner = mocha.run((failed) => {
       const passed = runner.stats?.passes ?? 0;
