@@ -66,7 +66,7 @@ export function differencePlot(voice: Voice, along: AlongFigure, differs: boolea
       marks: [
         { what: "zero", axis: "y", at: 0, stretch: null, label: slopesWords.zero(voice) },
         ...(differs ? crossingMarks(along) : []),
-        ...sharedMarks(along),
+        ...sharedMarks(along, plan),
       ],
       stops,
       twin: twinOf(voice, along, difference, differs, places, decimals),

@@ -68,7 +68,7 @@ export function linesPlot(voice: Voice, along: AlongFigure): Plot[] {
         // said once, for all groups together
         note: i === 0 ? sayDrawn(along.points.x.length, along.points.of, plan) : null,
       })),
-      marks: sharedMarks(along),
+      marks: sharedMarks(along, plan),
       stops: places.map((value) => ({
         x: value,
         y: means(value)[0].y,

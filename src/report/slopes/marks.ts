@@ -1,14 +1,15 @@
 import type { AlongFigure } from "../../engine/figure/types";
+import type { Plan } from "../../engine/plan";
 import { slopesWords } from "../wording/slopesPlots";
 import type { Mark } from "./presentation";
 
 /** The ends of what all groups share, where they lie inside the modifier's range. */
-export function sharedMarks({ shared, range }: AlongFigure): Mark[] {
+export function sharedMarks({ shared, range }: AlongFigure, plan: Plan): Mark[] {
   if (!shared) return [];
   const at = (what: Mark["what"], value: number, label: string): Mark => ({ what, axis: "x", at: value, stretch: null, label });
   return [
-    ...(shared[0] > range[0] ? [at("shared from", shared[0], slopesWords.sharedFrom)] : []),
-    ...(shared[1] < range[1] ? [at("shared to", shared[1], slopesWords.sharedTo)] : []),
+    ...(shared[0] > range[0] ? [at("shared from", shared[0], slopesWords.sharedFrom(plan))] : []),
+    ...(shared[1] < range[1] ? [at("shared to", shared[1], slopesWords.sharedTo(plan))] : []),
   ];
 }
 

@@ -75,7 +75,7 @@ export interface Curve {
   readonly group: number | null;
   readonly x: readonly number[];
   readonly y: readonly number[];
-  /** Drawn where the group has rows; false for the dashed parts beyond them. */
+  /** Drawn where the group has rows; false for the dotted parts beyond them. */
   readonly supported: boolean;
 }
 

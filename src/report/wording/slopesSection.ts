@@ -104,7 +104,7 @@ function sayHow(voice: Voice, { averagedOver, heldAt, along, levels }: SlopesFig
   if (along && !along.shared) sentences.push(`At no ${columnName(along.modifier, plan)} does every group have ${name}.`);
   else if (along?.shared && (along.shared[0] > along.range[0] || along.shared[1] < along.range[1]))
     sentences.push(
-      `Every group has ${name} from ${columnName(along.modifier, plan)} ${placeText(along.shared[0])} to ${placeText(along.shared[1])}; beyond, lines are dashed.`,
+      `Every group has ${name} from ${columnName(along.modifier, plan)} ${placeText(along.shared[0])} to ${placeText(along.shared[1])}; beyond, lines are dotted.`,
     );
   if (levels.some((l) => !l.supported)) sentences.push(`Where some group has no ${name}, this is marked.`);
   return sentences;
