@@ -126,3 +126,74 @@ test("where there is nothing to say of slopes there is no section", async () => 
   assert.equal(await page.locator("[data-section=slopes]").isVisible(), false);
   await close();
 });
+
+test("by keyboard a plot is read stop by stop, in the host's words, and other keys are left alone", async () => {
+  for (const [name, kind] of [
+    ["slopes along a number", "difference"],
+    ["slopes by a category", "levels"],
+    ["slopes of one line", "added"],
+  ]) {
+    const state = STATES[name];
+    const { page, close } = await browser.open({ state });
+    const { stops } = state.slopes.plots.find((plot) => plot.kind === kind);
+    const plot = page.locator(`[data-plot=${kind}] .plot`);
+    const said = page.locator(`[data-plot=${kind}] [aria-live=polite]`);
+    const reads = async (key) => {
+      await page.keyboard.press(key);
+      return said.textContent();
+    };
+    await plot.focus();
+    assert.match(await said.textContent(), /arrow keys/);
+    assert.equal(await reads("ArrowRight"), stops[0].text);
+    assert.equal(await reads("ArrowRight"), stops[1].text);
+    assert.equal(await reads("End"), stops.at(-1).text);
+    assert.equal(await reads("ArrowRight"), stops.at(-1).text);
+    assert.equal(await reads("ArrowLeft"), stops.at(-2).text);
+    assert.equal(await reads("Home"), stops[0].text);
+    assert.equal(await reads("a"), stops[0].text);
+    assert.equal(await reads("Control+End"), stops[0].text);
+    assert.ok((await page.locator(`[data-plot=${kind}] .plot-ring`).count()) > 0);
+    await page.keyboard.press("Tab");
+    assert.equal(await plot.evaluate((element) => element === document.activeElement), false);
+    await close();
+  }
+});
+
+test("under the pointer a plot says the nearest stop, marks it on the curve, and goes back to where a person stood", async () => {
+  const { page, close } = await browser.open({ state: ALONG, kept: { open: ["slopes"] } });
+  const { stops, x, y } = ALONG.slopes.plots[1];
+  const plot = page.locator("[data-plot=difference] .plot");
+  const said = page.locator("[data-plot=difference] [aria-live=polite]");
+  await plot.focus();
+  await page.keyboard.press("End");
+  await plot.scrollIntoViewIfNeeded();
+  const area = await page.locator("[data-plot=difference] .plot-area").boundingBox();
+  const stop = stops[Math.floor(stops.length / 3)];
+  const left = area.x + ((stop.x - x.from) / (x.to - x.from)) * area.width;
+  const before = await page.locator("[data-plot=difference]").boundingBox();
+  await page.mouse.move(left, area.y + 40);
+  assert.equal(await said.textContent(), stop.text);
+  const ring = await page.locator("[data-plot=difference] .plot-ring").boundingBox();
+  const top = area.y + ((y.to - stop.y) / (y.to - y.from)) * area.height;
+  assert.ok(Math.abs(ring.x + ring.width / 2 - left) < 1.5 && Math.abs(ring.y + ring.height / 2 - top) < 1.5);
+  assert.deepEqual(await page.locator("[data-plot=difference]").boundingBox(), before, "nothing moves");
+  await page.mouse.move(2, 2);
+  assert.equal(await said.textContent(), stops.at(-1).text);
+  await close();
+});
+
+test("a new result leaves the focus on the plot, the place read and the scroll where they were", async () => {
+  const { page, show, close } = await browser.open({ state: ALONG });
+  const [lines, difference] = ALONG.slopes.plots;
+  const plot = page.locator("[data-plot=difference] .plot");
+  await plot.focus();
+  await page.keyboard.press("End");
+  const scroll = await page.evaluate(() => window.scrollY);
+  assert.ok(scroll > 0);
+  const stops = difference.stops.slice(0, -2).map((stop) => ({ ...stop, text: `${stop.text} Again.` }));
+  await show({ ...ALONG, slopes: { ...ALONG.slopes, plots: [lines, { ...difference, stops }] } });
+  assert.equal(await plot.evaluate((element) => element === document.activeElement), true);
+  assert.equal(await page.locator("[data-plot=difference] [aria-live=polite]").textContent(), stops.at(-1).text);
+  assert.equal(await page.evaluate(() => window.scrollY), scroll);
+  await close();
+});

@@ -14,7 +14,7 @@ const GAP = 8;
 /** Names as text over the canvas: at the ends of the groups' lines, before their strips, and over the intervals of levels. */
 export function labelsOf(chart: Chart, plot: Plot, palette: Palette): HTMLElement[] {
   const frame = frameOn(chart);
-  const { left, top, width } = frame.area;
+  const { left, width } = frame.area;
   const name = (text: string, kind: string, style: Partial<Record<"left" | "right" | "width" | "top", number>>) => {
     const label = el("span", { class: `plot-name ${kind}`, title: text }, text);
     for (const [key, value] of Object.entries(style)) label.style.setProperty(key, `${value}px`);
@@ -22,19 +22,18 @@ export function labelsOf(chart: Chart, plot: Plot, palette: Palette): HTMLElemen
   };
   const bold = (text: string) => 1.1 * widthOf(text, palette);
   const lines = endLabels(plot, frame, bold, LINE).map((end) => {
-    const label = name(end.text, "end", { right: chart.width - end.right, top: end.middle - LINE / 2 });
+    const label = name(end.text, "of-line", { right: chart.width - end.right, top: end.middle - LINE / 2 });
     label.title = plot.groups[end.group];
     return label;
   });
   const strips = plot.densities.map(({ group }, i) => {
     const strip = stripAt(chart, plot, i);
-    return name(plot.groups[group] ?? "", "strip", { left: 0, width: left - GAP, top: strip.top + strip.height - LINE + 2 });
+    return name(plot.groups[group] ?? "", "of-strip", { left: 0, width: left - GAP, top: strip.top + strip.height - LINE });
   });
   const levels = isFlipped(plot)
     ? plot.intervals.map((level) =>
-        name(level.name, "level", { left: left + 4, width: width - 4, top: frame.y(level.x) - LINE - 6 }),
+        name(level.name, "of-level", { left: left + 4, width: width - 4, top: frame.y(level.x) - LINE - 6 }),
       )
     : [];
-  // a level's name above the first row has room there too
-  return [...lines, ...strips, ...levels].filter((label) => parseFloat(label.style.top) >= top - LINE);
+  return [...lines, ...strips, ...levels];
 }

@@ -19,18 +19,18 @@ export interface Figure {
 
 /** One plot with its title, key, axes' names, its summary for a screen reader and its text twin. */
 export function layFigure(kind: Plot["kind"], view: View): Figure {
+  const name = `plot ${kind}`;
   const title = el("figcaption", { id: `plot-${kind}` });
   const summary = el("p", { class: "unseen", id: `plot-${kind}-summary` });
   const key = el("div", { class: "key" });
   const [above, below] = [el("p", { class: "axis-name" }), el("p", { class: "axis-name below" })];
-  const picture = layPlot();
+  const picture = layPlot(`${name} plot`, title.id, summary.id);
   const note = el("p", { class: "quiet" });
   const twin = el("div", { class: "twin" });
-  const name = `plot ${kind}`;
   const fold = el("details", { open: view.isOpen(name) }, el("summary", { "data-focus": name }, "as a table"), twin);
   fold.addEventListener("toggle", () => view.setOpen(name, fold.open));
   const root = el("figure", { "data-plot": kind, "aria-labelledby": title.id });
-  root.append(title, summary, key, above, picture.root, below, note, fold);
+  root.append(title, summary, key, above, picture.root, below, picture.said, note, fold);
 
   const drawKey = (plot: Plot) => {
     const palette = paletteOf();
