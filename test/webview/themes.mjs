@@ -33,6 +33,10 @@ const dark = {
   "progressBar-background": "#0078d4",
   "charts-blue": "#3794ff",
   "charts-orange": "#d18616",
+  "charts-green": "#89d185",
+  "charts-purple": "#b180d7",
+  "charts-red": "#f14c4c",
+  "charts-yellow": "#cca700",
 };
 const light = {
   ...dark,
@@ -65,6 +69,10 @@ const light = {
   errorForeground: "#c72e0f",
   "inputValidation-warningBackground": "#f6f5d2",
   "charts-blue": "#1a85ff",
+  "charts-green": "#388a34",
+  "charts-purple": "#652d90",
+  "charts-red": "#e51400",
+  "charts-yellow": "#bf8803",
   "progressBar-background": "#005fb8",
 };
 const highContrast = (ink, ground, line, link) => ({

@@ -17,14 +17,13 @@ const CENTRE = KEY_WIDTH / 2;
 
 /** What is drawn and what it means, in the order of reading: groups or bands, then marks. */
 export function keysOf(plot: Plot): Key[] {
-  const { kind, bands, curves, groups, marks } = plot;
-  const own = kind === "lines" ? groupKeys(plot) : bands.length > 0 ? bandKeys(plot) : [];
-  const plain = kind === "added" || (kind === "difference" && bands.length === 0);
-  const line = plain && curves.length > 0 ? [{ text: curves[0].name, sample: [stroke("line", null)] }] : [];
+  const { kind, curves, marks } = plot;
+  const own = kind === "lines" ? groupKeys(plot) : bandKeys(plot);
+  const line = kind === "added" ? curves.slice(0, 1).map(({ name }) => ({ text: name, sample: [stroke("line", null)] })) : [];
   // the last column of such a plot's twin is named after the interval
   const interval = kind === "levels" ? [{ text: plot.twin.head[plot.twin.head.length - 1], sample: sampleInterval() }] : [];
   const marked = marks.map((mark) => ({ text: mark.label, sample: sampleMark(mark) }));
-  return [...line, ...own.filter((_, i) => i < Math.max(groups.length, 2)), ...interval, ...marked];
+  return [...line, ...own, ...interval, ...marked];
 }
 
 /** One key a group: its band, line and shape together; a band's name says the group's. */
