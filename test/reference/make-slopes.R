@@ -26,6 +26,8 @@ case <- function(name, file, d, outcome, exposure, modifier, others, kind, plan)
   ix <- grep(":", names(b), value = TRUE, fixed = TRUE); D <- b[ix] * diff(C); s <- sqrt(diag(V)[ix]) * diff(C); k <- which.max(abs(D)); q <- qt(.95, df)
   list(name = name, file = file, plan = plan, contrasts = per_level, change = list(from = exact(C[1]), to = exact(C[2]), estimate = exact(D[[k]]), low = exact(D[[k]] - q * s[[k]]), high = exact(D[[k]] + q * s[[k]])))
 }
+pg <- read.csv("test/reference/data/penguins.csv", na.strings = ""); pg <- pg[complete.cases(pg[c("body_mass", "species", "flipper", "sex")]), ]
+pg$species <- relevel(factor(pg$species), "Adelie"); pg$sex <- relevel(factor(pg$sex), "FEMALE")
 mt <- mtcars; mt$am <- factor(mt$am); an <- anorexia; an$Treat <- relevel(factor(an$Treat), "Cont")
 plan <- function(outcome, exposure, reference, set, modifier, kind) list(outcome = list(column = outcome), exposure = list(column = exposure, reference = reference), covariates = lapply(set, function(v) list(column = v)), sets = I(list(I(set))), modifiers = I(modifier), variance = kind, slopesAlpha = 0.999999)
 cases <- list(
@@ -33,6 +35,8 @@ cases <- list(
   case("mtcars by weight, power held, HC3", "mtcars.csv", mt, "mpg", "am", "wt", "hp", "HC3", plan("mpg", "am", 0, c("wt", "hp"), "wt", "HC3")),
   case("mtcars by power, slopes nearly equal", "mtcars.csv", mt, "mpg", "am", "hp", character(0), "HC3", plan("mpg", "am", 0, "hp", "hp", "HC3")),
   case("mtcars by quarter mile", "mtcars.csv", mt, "mpg", "am", "qsec", character(0), "HC2", plan("mpg", "am", 0, "qsec", "qsec", "HC2")),
-  case("anorexia by weight before", "anorexia.csv", an, "Postwt", "Treat", "Prewt", character(0), "HC3", plan("Postwt", "Treat", "Cont", "Prewt", "Prewt", "HC3")))
+  case("anorexia by weight before", "anorexia.csv", an, "Postwt", "Treat", "Prewt", character(0), "HC3", plan("Postwt", "Treat", "Cont", "Prewt", "Prewt", "HC3")),
+  case("penguins by flipper, three species, sex held", "penguins.csv", pg, "body_mass", "species", "flipper", "sex", "HC3", plan("body_mass", "species", "Adelie", c("sex", "flipper"), "flipper", "HC3")),
+  case("penguins by flipper, two sexes, classical", "penguins.csv", pg, "body_mass", "sex", "flipper", character(0), "classical", plan("body_mass", "sex", "FEMALE", "flipper", "flipper", "classical")))
 writeLines(toJSON(list(madeBy = list(R = R.version.string, sandwich = as.character(packageVersion("sandwich"))),
   calls = "lm; vcov / vcovHC; qt, qf; polyroot on (a + b x)^2 - c (vaa + 2 x vab + x^2 vbb)", cases = cases), auto_unbox = TRUE, pretty = 1), "test/reference/expected/slopes.json")
