@@ -7,6 +7,7 @@ import { isFlipped } from "../charts/room";
 import { el } from "../dom";
 import { redraw } from "../redraw";
 import type { View } from "../view";
+import { saveTools } from "./save";
 import { twinOf } from "./twin";
 
 export interface Figure {
@@ -20,6 +21,7 @@ export interface Figure {
 /** One plot with its title, key, axes' names, its summary for a screen reader and its text twin. */
 export function layFigure(kind: Plot["kind"], view: View): Figure {
   const name = `plot ${kind}`;
+  let shown: Plot | null = null;
   const title = el("figcaption", { id: `plot-${kind}` });
   const summary = el("p", { class: "unseen", id: `plot-${kind}-summary` });
   const key = el("div", { class: "key" });
@@ -29,8 +31,9 @@ export function layFigure(kind: Plot["kind"], view: View): Figure {
   const twin = el("div", { class: "twin" });
   const fold = el("details", { open: view.isOpen(name) }, el("summary", { "data-focus": name }, "as a table"), twin);
   fold.addEventListener("toggle", () => view.setOpen(name, fold.open));
+  const tools = saveTools(() => shown, name, title.id, view.post);
   const root = el("figure", { "data-plot": kind, "aria-labelledby": title.id });
-  root.append(title, summary, key, above, picture.root, below, picture.said, note, fold);
+  root.append(title, summary, key, above, picture.root, below, picture.said, note, fold, tools);
 
   const drawKey = (plot: Plot) => {
     const palette = paletteOf();
@@ -41,7 +44,6 @@ export function layFigure(kind: Plot["kind"], view: View): Figure {
       ),
     );
   };
-  let shown: Plot | null = null;
   const themed = onTheme(() => shown && drawKey(shown));
   return {
     root,
