@@ -17,6 +17,11 @@ function hidden(table: Parameters<typeof compare>[0], plan: Plan, varying: reado
   );
 }
 
+/** A difference as it stands, as a share in percent, and of logarithms as a ratio and a percent difference. */
+function asPrinted(value: number, { outcome }: Plan): number[] {
+  return outcome.form === "log" ? [value, Math.exp(value), 100 * Math.expm1(value)] : [value, 100 * value];
+}
+
 const CASES: Record<string, { table: Parameters<typeof compare>[0]; plan: Plan }> = {
   "the glazing sample": sample("glazing"),
   "mtcars by weight": openData("mtcars", {
@@ -37,13 +42,50 @@ const CASES: Record<string, { table: Parameters<typeof compare>[0]; plan: Plan }
   }),
 };
 
+/** Refused whatever the test says, so that surfaces are searched on data of other kinds too. */
+const refusing = { slopesAlpha: 0.999999 };
+Object.assign(CASES, {
+  "a log outcome: airquality": openData("airquality", {
+    outcome: { column: "Ozone", form: "log" },
+    exposure: { column: "Temp" },
+    covariates: [{ column: "Wind" }],
+    ...refusing,
+  }),
+  "a yes/no outcome: birthwt": openData("birthwt", {
+    outcome: { column: "low" },
+    exposure: { column: "smoke", reference: 0 },
+    covariates: [{ column: "lwt" }],
+    ...refusing,
+  }),
+  "columns in every set: mtcars": openData("mtcars", {
+    outcome: { column: "mpg" },
+    exposure: { column: "am", reference: 0 },
+    covariates: [{ column: "wt" }, { column: "hp" }],
+    always: ["wt"],
+    modifiers: ["wt"],
+    ...refusing,
+  }),
+  "two modifiers: mtcars": openData("mtcars", {
+    outcome: { column: "mpg" },
+    exposure: { column: "am", reference: 0 },
+    covariates: [{ column: "wt" }, { column: "qsec" }],
+    ...refusing,
+  }),
+  "an average over stated rows: anorexia": openData("anorexia", {
+    outcome: { column: "Postwt" },
+    exposure: { column: "Treat", reference: "Cont" },
+    covariates: [{ column: "Prewt" }],
+    average: "all rows",
+  }),
+});
+
 describe("where slopes differ no output holds the common-slope number", () => {
   for (const [name, { table, plan }] of Object.entries(CASES)) {
     it(name, () => {
       const comparison = compare(table, plan);
       const varying = comparison.sets.flatMap((set, i) => (set.contrasts.some((c) => c.readout.kind === "varies") ? [i] : []));
       expect(varying.length).toBeGreaterThan(0);
-      const numbers = hidden(table, plan, varying);
+      const numbers = hidden(table, plan, varying).flatMap((value) => asPrinted(value, plan));
       expect(numbers.length).toBeGreaterThan(0);
       for (const [surface, text] of Object.entries(everyOutput(table, plan))) {
         const seen = tokens(text);
