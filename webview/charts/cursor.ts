@@ -3,12 +3,12 @@ import type { Frame } from "../../src/report/slopes/picture/place";
 import { el } from "../dom";
 import { isFlipped } from "./room";
 
-const HINT = "Point at the plot, or focus it and press the arrow keys, to read exact values.";
+const HINT = "Point at the plot, or press arrow keys on it, for exact values.";
 
 export interface Cursor {
   /** Lies over the plot's area and shows the place that is read. */
   readonly area: HTMLElement;
-  /** The exact values there, told to a screen reader politely; room for the longest is kept. */
+  /** The exact values there, told to a screen reader politely; room for the longest is kept once they are read. */
   readonly said: HTMLElement;
   /** The plot was drawn: its stops and where they lie. */
   readonly lay: (plot: Plot, frame: Frame) => void;
@@ -31,6 +31,8 @@ export function layCursor(host: HTMLElement): Cursor {
 
   function show(at: number | null): void {
     if (!now) return;
+    if (at !== null)
+      longest.textContent = now.plot.stops.reduce((most, { text }) => (text.length > most.length ? text : most), HINT);
     const stop = at === null ? undefined : now.plot.stops[at];
     area.replaceChildren(...(stop ? marks(now.plot, now.frame, stop) : []));
     const words = stop?.text ?? HINT;
@@ -74,7 +76,6 @@ export function layCursor(host: HTMLElement): Cursor {
       now = { plot, frame };
       const { left, top, width, height } = frame.area;
       Object.assign(area.style, { left: `${left}px`, top: `${top}px`, width: `${width}px`, height: `${height}px` });
-      longest.textContent = [HINT, ...plot.stops.map((stop) => stop.text)].reduce((a, b) => (b.length > a.length ? b : a));
       show(standing());
     },
   };

@@ -2,7 +2,6 @@
 export interface Palette {
   readonly ink: string;
   readonly soft: string;
-  readonly rule: string;
   readonly ground: string;
   /** Of groups in their order, again from the start after the last; the ink alone where the theme is one of high contrast. */
   readonly groups: readonly string[];
@@ -28,7 +27,6 @@ export function paletteOf(): Palette {
   return {
     ink,
     soft: forced ? ink : plain(variable(["descriptionForeground"], ink)),
-    rule: forced ? plain("GrayText") : plain(variable(["editorWidget-border", "panel-border", "contrastBorder"], ink)),
     ground: plain(forced ? "Canvas" : style.backgroundColor),
     groups: alike ? [ink] : [ink, ...OTHERS.map(chart)],
     difference: chart("blue"),

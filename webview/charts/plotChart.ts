@@ -48,6 +48,8 @@ export function datasetsOf({ curves, points }: Plot, palette: Palette): ChartDat
     const { stroke, strokeShare, width } = paintOf("points", group, palette);
     return {
       data: x.map((at, i) => ({ x: at, y: y[i] })),
+      // rows at the ends of the axis are seen whole
+      clip: EDGE / 2,
       pointStyle: STYLES[shapeOf(group)],
       pointRadius: rows >= MANY ? 2.5 : 3.5,
       pointBorderColor: faded(stroke ?? palette.ink, strokeShare),
@@ -84,7 +86,7 @@ function scaleOf({ from, to, ticks, log }: Plot["x"], palette: Palette, lines: b
     type: log ? "logarithmic" : "linear",
     min: from,
     max: to,
-    grid: { display: lines, color: faded(palette.rule, 0.6), tickLength: 4 },
+    grid: { display: lines, color: faded(palette.ink, 0.14), tickLength: 4 },
     border: { color: palette.soft },
     afterBuildTicks: (scale: { ticks: { value: number }[] }) => (scale.ticks = ticks.map(({ at }) => ({ value: at }))),
     ticks: {
