@@ -5,6 +5,9 @@ import { withUnit } from "../scale";
 import { decimalsOf, direction, intervalPhrase, range } from "./difference";
 import type { Voice } from "./difference";
 
+/** Places that one sentence can hold. */
+const FEW_PLACES = 4;
+
 /** What stays open about slopes where one estimate is printed: which modifiers, and how much the data leave open. */
 export function sayUndecided(voice: Voice, set: Pick<SetResult, "slopes">): string | null {
   const open = set.slopes.filter((s) => s.verdict === "cannot tell");
@@ -47,7 +50,7 @@ export function sayVaries(
 
 /** The sentences that stand in place of a number: differences at stated values, the crossing, the regions, what to report. */
 export function sayInstead(voice: Voice, readout: VariesReadout, held: string): string[] {
-  const sentences = [sayProfiles(voice, readout, held)];
+  const sentences = sayProfiles(voice, readout, held);
   sentences.push(...sayWhere(voice, readout));
   if (readout.average) sentences.push(sayAverage(voice, readout.average));
   return sentences;
@@ -82,26 +85,35 @@ function sayAverage(voice: Voice, average: AverageOverRows): string {
   return `Averaged over ${whose}, the ${what} is ${direction(voice, average.estimate, decimals)} ${intervalPhrase(voice, average, decimals)}; it is an average of differing ${what}s and belongs to these rows.`;
 }
 
-function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): string {
-  const { scale } = voice;
-  const decimals = profileDecimals(voice, profiles);
-  const said = profiles.map((profile) => {
-    const interval = profile.interval ? ` (${range(voice, profile.interval, decimals)})` : "";
-    const beyond = profile.supported ? "" : ", where some group has no rows,";
-    return `${fixed(Math.abs(scale.show(profile.estimate)), decimals)} ${scale.show(profile.estimate) < 0 ? "lower" : "higher"}${interval} at ${placeName(voice, profile)}${beyond}`.replace(
-      /,$/,
-      "",
-    );
-  });
+/** One sentence for a few places; for many, a sentence each. */
+function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): string[] {
   const { comparison, outcome, exposure, contrast } = voice;
+  const decimals = profileDecimals(voice, profiles);
   const who =
     comparison.question.kind === "groups"
-      ? `${outcome} for ${exposure} = ${word(contrast.level!)} is`
-      : `${outcome} per ${exactly(comparison.question.per)} more of ${exposure} is`;
-  const unit = scale.unit === "" ? "" : ` ${scale.unit}`;
-  const first = said[0] ? said[0].replace(/^(\S+(?: × \S+)?) /, `$1${unit} `) : "";
-  return `${held}, ${who} ${listed([first, ...said.slice(1)])}.`;
+      ? `${outcome} for ${exposure} = ${word(contrast.level!)}`
+      : `${outcome} per ${exactly(comparison.question.per)} more of ${exposure}`;
+  if (profiles.length > FEW_PLACES) {
+    const each = profiles.map(
+      (profile) => `At ${placeName(voice, profile)}${beyond(profile)} it is ${sayProfile(voice, profile, decimals, true)}.`,
+    );
+    return [`${held}, ${who} depends on where one looks.`, ...each];
+  }
+  const said = profiles.map(
+    (profile, i) => `${sayProfile(voice, profile, decimals, i === 0)} at ${placeName(voice, profile)}${beyond(profile)}`,
+  );
+  return [`${held}, ${who} is ${listed(said).replace(/,$/, "")}.`];
 }
+
+/** "212 kWh lower (160 to 264 lower)". */
+function sayProfile(voice: Voice, { estimate, interval }: Profile, decimals: number, withUnits: boolean): string {
+  const shown = voice.scale.show(estimate);
+  const size = fixed(Math.abs(shown), decimals);
+  const ends = interval ? ` (${range(voice, interval, decimals)})` : "";
+  return `${withUnits ? withUnit(size, voice.scale) : size} ${shown < 0 ? "lower" : "higher"}${ends}`;
+}
+
+const beyond = ({ supported }: Profile): string => (supported ? "" : ", where some group has no rows,");
 
 /** Where the difference changes sign, with how sure that is. */
 function sayCrossing(voice: Voice, crossing: Crossing, regions: readonly Region[]): string {
@@ -118,7 +130,7 @@ function sayCrossing(voice: Voice, crossing: Crossing, regions: readonly Region[
     case "between":
       return `The ${what} changes sign at ${name} ${at} (${level} interval ${endsOf(interval.low, interval.high)}); ${percent(below)} of the ${rowsName(plan)} lie below it.`;
     case "outside":
-      return `The ${what} changes sign at ${name} ${at}, but the data only say that it is not between ${endsOf(interval.low, interval.high, "and")}.`;
+      return `The ${what} changes sign at ${name} ${at}, but the data only say that it lies outside of ${endsOf(interval.low, interval.high)}.`;
     case "everywhere":
       return `The ${what} is estimated to change sign at ${name} ${at}, but the data do not say where: its ${level} interval is the whole line.`;
   }
