@@ -14,6 +14,8 @@ const THEMES = { light: "Default Light Modern", dark: "Default Dark Modern", hc:
 /** Widths of the panel, from widths of the window with the side bar closed and two editors side by side. */
 const WIDTHS = { 360: 770, 600: 1250, 1000: 2050 };
 const SAMPLES = ["heating", "seals", "valves", "glazing"];
+/** Heights of the window: of a panel as it opens, and with its plots. */
+const [PLAIN, TALL] = [1250, 2600];
 
 fs.mkdirSync(out, { recursive: true });
 const folder = fs.mkdtempSync(path.join(os.tmpdir(), "slantwise-shots-"));
@@ -36,12 +38,20 @@ try {
       path.join(folder, `${sample}.slantwise.json`),
     );
     await page.locator(`body[data-status="ready"] .facts:has-text("${sample}.csv")`).first().waitFor({ timeout: 60_000 });
+    await everywhere(sample, PLAIN);
+    await page.locator('[data-focus="slopes"]').click();
+    await page.locator("[data-section=slopes] canvas").first().waitFor({ timeout: 30_000 });
+    await everywhere(`${sample}-slopes`, TALL);
+    await page.locator('[data-focus="slopes"]').click();
+  }
+
+  async function everywhere(what, height) {
     for (const [width, window] of Object.entries(WIDTHS)) {
-      await wb.page.setViewportSize({ width: window, height: 1250 });
+      await wb.page.setViewportSize({ width: window, height });
       for (const name of Object.keys(THEMES)) {
         await theme(name);
         await wb.page.waitForTimeout(400); // the workbench lays itself out
-        await wb.screenshot(path.join(out, `${sample}-${width}-${name}.png`));
+        await wb.screenshot(path.join(out, `${what}-${width}-${name}.png`));
       }
     }
   }
