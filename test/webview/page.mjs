@@ -95,7 +95,7 @@ export function misplaced(page) {
       getComputedStyle(element).clipPath === "none";
     const pieces = [
       ...document.querySelectorAll(
-        "h2, h3, p.sentence, select, input, button, .estimate, .between, [data-cell], td.axis-cell, .place, .strip-plot, .strip-name, .fact",
+        "h2, h3, p.sentence, select, input, button, .estimate, .between, [data-cell], td.axis-cell, .place, .strip-plot, .strip-name, .fact, figcaption, .key-item, .axis-name, .plot, .plot-said, .twin, summary",
       ),
     ].filter(seen);
     const boxes = pieces

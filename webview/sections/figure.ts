@@ -28,7 +28,9 @@ export function layFigure(kind: Plot["kind"], view: View): Figure {
   const [above, below] = [el("p", { class: "axis-name" }), el("p", { class: "axis-name below" })];
   const picture = layPlot(`${name} plot`, title.id, summary.id);
   const note = el("p", { class: "quiet" });
-  const twin = el("div", { class: "twin" });
+  // a wide table is moved by keyboard too
+  const scrolled = { role: "group", tabindex: 0, "aria-labelledby": title.id, "data-focus": `${name} table` };
+  const twin = el("div", { class: "twin", ...scrolled });
   const fold = el("details", { open: view.isOpen(name) }, el("summary", { "data-focus": name }, "as a table"), twin);
   fold.addEventListener("toggle", () => view.setOpen(name, fold.open));
   const tools = saveTools(() => shown, name, title.id, view.post);
