@@ -95,14 +95,18 @@ function sayProfiles(voice: Voice, { profiles }: VariesReadout, held: string): s
       : `${outcome} per ${exactly(comparison.question.per)} more of ${exposure}`;
   if (profiles.length > FEW_PLACES) {
     const each = profiles.map(
-      (profile) => `At ${placeName(voice, profile)}${beyond(profile)} it is ${sayProfile(voice, profile, decimals, true)}.`,
+      (profile) =>
+        `At ${placeName(voice, profile)}${beyond(voice, profile, ",")} it is ${sayProfile(voice, profile, decimals, true)}.`,
     );
     return [`${held}, ${who} depends on where one looks.`, ...each];
   }
+  // a list has commas of its own, but none before its "and"
+  const after = (i: number) => (i === profiles.length - 2 ? "," : "");
   const said = profiles.map(
-    (profile, i) => `${sayProfile(voice, profile, decimals, i === 0)} at ${placeName(voice, profile)}${beyond(profile)}`,
+    (profile, i) =>
+      `${sayProfile(voice, profile, decimals, i === 0)} at ${placeName(voice, profile)}${beyond(voice, profile, after(i))}`,
   );
-  return [`${held}, ${who} is ${listed(said).replace(/,$/, "")}.`];
+  return [`${held}, ${who} is ${listed(said)}.`];
 }
 
 /** "212 kWh lower (160 to 264 lower)". */
@@ -113,7 +117,10 @@ function sayProfile(voice: Voice, { estimate, interval }: Profile, decimals: num
   return `${withUnits ? withUnit(size, voice.scale) : size} ${shown < 0 ? "lower" : "higher"}${ends}`;
 }
 
-const beyond = ({ supported }: Profile): string => (supported ? "" : ", where some group has no rows,");
+/** ", where some group has no flats", and what closes it. */
+function beyond({ plan }: Voice, { supported }: Profile, close: string): string {
+  return supported ? "" : `, where some group has no ${rowsName(plan)}${close}`;
+}
 
 /** Where the difference changes sign, with how sure that is. */
 function sayCrossing(voice: Voice, crossing: Crossing, regions: readonly Region[]): string {

@@ -24,6 +24,18 @@ describe("every section", () => {
     expect(lines.points.reduce((sum, { x: drawn }) => sum + drawn.length, 0)).toBe(2000);
     expect(lines.points.map(({ note }) => note)).toEqual(["2,000 of 5,000 rows drawn", null]);
   });
+  it("says of places where some group has no rows that it has none, in a sentence without a comma too many", () => {
+    const { normal } = seeded(8);
+    const x = Array.from({ length: 300 }, (_, i) => (i % 2 ? 40 : 0) + (60 * i) / 300);
+    const g = x.map((_, i) => (i % 2 ? "b" : "a"));
+    const y = x.map((v, i) => v + (i % 2 ? 3 * (v - 50) : 0) + normal());
+    const plan = planOf("y", "g", ["x"], { exposure: { column: "g", reference: "a" }, rowsAre: "flats" });
+    const said = sectionOf({ table: tableOf({ x, g, y }), plan }).sentences.find((text) => text.startsWith("Holding x fixed"));
+    expect(said).toMatch(
+      / at x [\d.]+, where some group has no flats, [\d.]+ .* at x [\d.]+ and [\d.]+ .* at x [\d.]+, where some group has no flats\.$/,
+    );
+    expect(said).not.toContain(",,");
+  });
   it("says the lowest and the highest of many levels, and draws all", () => {
     const { uniform, normal } = seeded(6);
     const z = Array.from({ length: 600 }, (_, i) => `z${i % 6}`);
