@@ -4,6 +4,7 @@ import { KEY_HEIGHT, KEY_WIDTH, keysOf } from "./keys";
 import { endLabels, shortened } from "./labels";
 import { paintPiece, paintRule, paintText } from "./paint";
 import { bandPieces, curvePieces, densityPiece, intervalPieces, markerPieces, markPieces, pointPieces } from "./pieces";
+import type { Piece } from "./pieces";
 import { frameOf } from "./place";
 import type { Frame } from "./place";
 import { px } from "./shapes";
@@ -110,25 +111,28 @@ function axes({ area, x, y }: Frame, across: PlotAxis, up: PlotAxis | null): str
   return parts;
 }
 
-/** Everything inside the axes; what reaches beyond them is cut off. */
+/** Everything inside the axes; lines and bands that reach beyond them are cut off. */
 function drawn(plot: Plot, frame: Frame): string[] {
   const { area } = frame;
   const { left, top, width, height } = area;
-  const inside = [
+  const under = [
     ...bandPieces(plot.bands, frame),
     ...markPieces(
       plot.marks.filter((mark) => plot.kind !== "levels" || mark.axis === "x"),
       frame,
     ),
-    ...pointPieces(plot, frame),
-    ...curvePieces(plot.curves, frame),
-    ...markerPieces(plot, frame),
   ];
+  const over = [...curvePieces(plot.curves, frame), ...markerPieces(plot, frame)];
   const place = `x="${px(left)}" y="${px(top)}" width="${px(width)}" height="${px(height)}"`;
   const view = `viewBox="${px(left)} ${px(top)} ${px(width)} ${px(height)}"`;
+  const inside = (pieces: readonly Piece[]) =>
+    pieces.length > 0 ? `<svg ${place} ${view} overflow="hidden">${pieces.map(paintPiece).join("")}</svg>` : "";
   const names = endLabels(plot, frame, (text) => 1.08 * widthOf(text), LINE - 3);
   return [
-    `<svg ${place} ${view} overflow="hidden">${inside.map(paintPiece).join("")}</svg>`,
+    inside(under),
+    // every row lies inside the axes; one at their end is drawn whole
+    ...pointPieces(plot, frame).map(paintPiece),
+    inside(over),
     ...(plot.kind === "levels" ? levels(plot, frame) : []),
     ...names.map(({ text, right, middle, group }) =>
       paintText(text, right, middle + 4.5, { anchor: "end", bold: true, group, rim: true }),
