@@ -9,6 +9,7 @@ import { layWorkbench } from "./cache.mjs";
 import { connectHost } from "./host.mjs";
 import { cellsOf, readPanel, rowsOfJson, rowsOfMarkdown, agree } from "./panel.mjs";
 import { startServer } from "./server.mjs";
+import { slopesSection } from "./slopes.mjs";
 import { openWorkbench } from "./workbench.mjs";
 
 const root = path.join(import.meta.dirname, "../..");
@@ -245,6 +246,17 @@ test(`a comparison in a real workbench (${mode})`, async (t) => {
       .evaluate((body) => body.textContent + [...body.querySelectorAll("option")].map((o) => o.label).join());
     assert.ok(html.includes("<img src=x onerror="), text);
     assert.ok(!(await cellsOf(page())).some((cell) => /undefined|NaN|Infinity|\bnull\b/.test(cell)));
+  });
+  await slopesSection(t, {
+    root,
+    folder,
+    page,
+    say: cli,
+    open: async (target) => {
+      await wb.explorerMenu(path.basename(target), "Open Comparison");
+      await page().locator("body").getByText("glazing.csv").first().waitFor();
+      await ready();
+    },
   });
   await t.test("the page and the extension raised no error", () => {
     const ours = wb.consoleLines.filter(
