@@ -10,7 +10,15 @@ const run = (args) => execFileSync(process.execPath, args, { cwd: root, encoding
 
 const EXPECTED = [
   ...["CHANGELOG.md", "LICENSE", "README.md", "package.json"],
-  ...["dist/cli.js", "dist/extension.js", "dist/panel.css", "dist/panel.js", "dist/plan.schema.json", "dist/worker.js"],
+  ...[
+    "dist/cli.js",
+    "dist/extension.js",
+    "dist/panel.css",
+    "dist/panel.js",
+    "dist/plan.schema.json",
+    "dist/assistant.js",
+    "dist/worker.js",
+  ],
   ...["dist/icons/icon.png", "dist/icons/panel-dark.svg", "dist/icons/panel-light.svg"],
 ];
 
