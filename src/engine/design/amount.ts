@@ -1,4 +1,4 @@
-import { powerOfTwo } from "../linear/scale";
+import { powerOfTwo, SAFE_SQUARES } from "../linear/scale";
 import type { Form } from "../plan";
 import { quantile } from "./quantile";
 import type { Basis } from "./types";
@@ -41,6 +41,19 @@ interface Start {
 
 /** Mean and a power of two near the standard deviation, free of overflow. */
 export function centring(values: Float64Array): { centre: number; scale: number } {
+  const n = values.length;
+  let sum = 0;
+  for (let i = 0; i < n; i++) sum += values[i];
+  const mean = sum / n;
+  let squares = 0;
+  for (let i = 0; i < n; i++) squares += (values[i] - mean) * (values[i] - mean);
+  // within these bounds neither overflow nor underflow can have touched a square that counts
+  if (squares > SAFE_SQUARES[0] && squares < SAFE_SQUARES[1]) return { centre: mean, scale: powerOfTwo(Math.sqrt(squares / n)) };
+  return carefulCentring(values);
+}
+
+/** As centring, for values near the ends of double range, or all the same. */
+function carefulCentring(values: Float64Array): { centre: number; scale: number } {
   const n = values.length;
   let largest = 0;
   for (let i = 0; i < n; i++) {

@@ -1,5 +1,7 @@
+import { BLOCK, kernels, loadBlock } from "../kernels";
+
 /** Sums of squares between these are exact to rounding. */
-const SAFE_SQUARES = [1e-200, 1e200] as const;
+export const SAFE_SQUARES = [1e-200, 1e200] as const;
 
 /**
  * The power of two nearest the Euclidean norm of √w·x: dividing by it is exact and leaves a column of norm between 0.7 and 1.5.
@@ -29,8 +31,16 @@ export function powerOfTwoNorm(x: Float64Array, weights: Float64Array | null): n
 
 function sumOfSquares(x: Float64Array, weights: Float64Array | null): number {
   let sum = 0;
-  if (weights) for (let i = 0; i < x.length; i++) sum += weights[i] * x[i] * x[i];
-  else for (let i = 0; i < x.length; i++) sum += x[i] * x[i];
+  if (weights) {
+    for (let i = 0; i < x.length; i++) sum += weights[i] * x[i] * x[i];
+    return sum;
+  }
+  const k = kernels();
+  const w = k.room(BLOCK);
+  for (let start = 0; start < x.length; start += BLOCK) {
+    const even = loadBlock(k, w, 0, x, start, Math.min(BLOCK, x.length - start));
+    sum += k.dot(0, 0, even);
+  }
   return sum;
 }
 

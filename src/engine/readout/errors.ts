@@ -11,8 +11,8 @@ import type { TreeErrors } from "../tree";
 import type { Depth, SetFit, SolvedSet } from "./set";
 
 /**
- * Gives each solved set its errors: all coefficients of the sets that are looked at in full, the exposure's alone (with the shift's) of the
- * others, these together in one pass over the rows.
+ * Gives each solved set its errors: all coefficients of the sets that are looked at in full, the exposure's alone of the others; these, and the
+ * shifts of all, together in one pass over the rows.
  * @param depth by set; the base set, the first, is never "exposure"
  */
 export function withErrors(
@@ -26,7 +26,7 @@ export function withErrors(
   const targets = design.exposure.columns;
   const [first] = solved;
   const base = first.enough ? ownErrors(design, first.fit, variance, depth(0), passing.memory) : null;
-  const others = solved.flatMap((set, i) => (i > 0 && set.enough && depth(i) === "exposure" ? [i] : []));
+  const others = solved.flatMap((set, i) => (i > 0 && set.enough && depth(i) !== "first look" ? [i] : []));
   const together = new Map<number, TreeErrors | null>();
   if (others.length > 0) {
     const psi = base && baseInfluences(design, first.fit, base, passing.memory);
@@ -38,8 +38,9 @@ export function withErrors(
     if (!set.enough) return { ...set, cov: null, shiftSquares: null };
     if (i === 0) return { ...set, cov: base, shiftSquares: null };
     const found = together.get(i);
-    if (!found) return { ...set, cov: ownErrors(design, set.fit, variance, depth(i), passing.memory), shiftSquares: null };
-    return { ...set, cov: withoutRows(found.errors), shiftSquares: found.shift };
+    const shiftSquares = found?.shift ?? null;
+    if (found && depth(i) === "exposure") return { ...set, cov: withoutRows(found.errors), shiftSquares };
+    return { ...set, cov: ownErrors(design, set.fit, variance, depth(i), passing.memory), shiftSquares };
   });
 }
 
