@@ -18,7 +18,7 @@ import { withErrors } from "./readout/errors";
 import { setResult } from "./readout/result";
 import type { Judged } from "./readout/result";
 import { solveSet } from "./readout/set";
-import type { Depth } from "./readout/set";
+import type { Depth, SolvedSet } from "./readout/set";
 import { findRows } from "./rows/common";
 import type { Rows } from "./rows/common";
 import { readSlopes } from "./slopes";
@@ -66,7 +66,8 @@ export function compare(table: Table, plan: Plan, options: CompareOptions = {}):
   memory?.reset();
   const design = buildDesign(resolved, rows.common, [...resolved.sources.keys()], modifiers, memory);
   const factor = factorise(design.frame, passing);
-  const work = { table, resolved, rows, design, factor, passing };
+  const started = { table, resolved, rows, design, factor, passing };
+  const work: Work = { ...started, solved: solveAll(started) };
   if (preview && isLong(resolved, rows))
     preview(finish({ ...head, resolved: asClassical(resolved) }, design, firstLook(work), []));
   const judged = judgeAll(work, resolved.question.variance, depthOf(resolved, rows));
@@ -79,6 +80,7 @@ interface Work {
   readonly rows: Rows;
   readonly design: Design;
   readonly factor: Factor;
+  readonly solved: readonly SolvedSet[];
   readonly passing: Passing;
 }
 
@@ -106,12 +108,21 @@ function firstLook(work: Work): SetResult[] {
   );
 }
 
-function judgeAll({ resolved, design, factor, passing }: Work, variance: Variance, depth: (set: number) => Depth): Judged[] {
-  const { level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
-  const solved = resolved.sets.map((columns, i) => {
+/** Every set's fit, shared by the first look and what follows. */
+function solveAll({ resolved, design, factor, passing }: Omit<Work, "solved">): SolvedSet[] {
+  const { variance } = resolved.question;
+  return resolved.sets.map((columns) => {
     stopIf(passing.cancelled);
-    return solveSet(design, factor, columns, variance, depth(i));
+    return solveSet(design, factor, columns, variance, "full");
   });
+}
+
+function judgeAll(
+  { resolved, design, factor, solved, passing }: Work,
+  variance: Variance,
+  depth: (set: number) => Depth,
+): Judged[] {
+  const { level, slopesAlpha, margin, outcomeForm, modifiers } = resolved.question;
   const sets = withErrors(design, factor, solved, variance, depth, passing);
   const slopes = readSlopes(
     {
