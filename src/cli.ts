@@ -8,9 +8,10 @@ process.stdout.on("error", (error: NodeJS.ErrnoException) => {
 });
 
 try {
-  const { out, aside } = run(process.argv.slice(2));
+  const { out, aside, exitCode = 0 } = run(process.argv.slice(2));
   process.stderr.write(aside);
   process.stdout.write(out);
+  process.exitCode = exitCode;
 } catch (error) {
   const { text, exitCode } = failure(error);
   process.stderr.write(text + "\n");

@@ -1,7 +1,7 @@
 import { parseArgs } from "node:util";
 import { nearestName } from "../plan/nearest";
 import { splitList } from "./list";
-import { OPTIONS } from "./options";
+import { BLOCK_OPTIONS, COMMANDS, isCommand, OPTIONS } from "./options";
 import type { Option } from "./options";
 import { Refusal } from "./refusal";
 import { say } from "./sentences";
@@ -11,18 +11,21 @@ export interface Arguments {
   readonly positionals: readonly string[];
   readonly help: boolean;
   readonly version: boolean;
+  /** Options without a value that were given, beside these two. */
+  readonly flags: ReadonlySet<string>;
   readonly values: ReadonlyMap<string, string | number | readonly string[]>;
 }
 
 const FLAGS = ["help", "version"];
-const NAMES = [...OPTIONS.map(({ name }) => name), ...FLAGS];
 
 /** @throws Refusal for an option that is unknown, lacks its value, is given twice or has a value it cannot have */
 export function readArguments(args: readonly string[]): Arguments {
   const { tokens, positionals } = parseArgs({
     args: [...args],
     options: {
-      ...Object.fromEntries(OPTIONS.map(({ name }) => [name, { type: "string" as const, multiple: true }])),
+      ...Object.fromEntries(
+        [...OPTIONS, ...BLOCK_OPTIONS].map(({ name }) => [name, { type: "string" as const, multiple: true }]),
+      ),
       help: { type: "boolean", short: "h" },
       version: { type: "boolean" },
     },
@@ -30,16 +33,22 @@ export function readArguments(args: readonly string[]): Arguments {
     strict: false, // its own sentences are for programmers
     tokens: true,
   });
+  const command = isCommand(positionals[0]) ? positionals[0] : "compare";
+  const options: readonly Option[] = COMMANDS[command].options;
+  const allFlags = [...COMMANDS[command].flags, ...FLAGS];
+  const names = [...options.map(({ name }) => name), ...allFlags];
+  /** `--margin --as json`: the value was forgotten. A name that begins with two dashes can be written `--outcome=--name`. */
+  const isOption = (text: string): boolean => text.startsWith("--") && names.includes(text.slice(2).split("=")[0]);
   const texts = new Map<string, string[]>();
   const flags = new Set<string>();
   for (const token of tokens) {
     if (token.kind !== "option") continue;
     const { name, rawName, value, inlineValue } = token;
-    const option = OPTIONS.find((each) => each.name === name);
-    if (FLAGS.includes(name)) {
+    const option = options.find((each) => each.name === name);
+    if (allFlags.includes(name)) {
       if (value !== undefined) throw new Refusal(say.valueForFlag(name));
       flags.add(name);
-    } else if (!option) throw new Refusal(say.unknownOption(rawName, nearestName(name, NAMES)));
+    } else if (!option) throw new Refusal(say.unknownOption(rawName, nearestName(name, names), command));
     else if (value === undefined || (!inlineValue && isOption(value))) throw new Refusal(say.noValue(name, option.value));
     else texts.set(name, [...(texts.get(name) ?? []), value]);
   }
@@ -48,15 +57,12 @@ export function readArguments(args: readonly string[]): Arguments {
     values.set(
       name,
       valueOf(
-        OPTIONS.find((each) => each.name === name)!,
+        options.find((each) => each.name === name)!,
         given,
       ),
     );
-  return { positionals, help: flags.has("help"), version: flags.has("version"), values };
+  return { positionals, help: flags.has("help"), version: flags.has("version"), flags, values };
 }
-
-/** `--margin --as json`: the value was forgotten. A name that begins with two dashes can be written `--outcome=--name`. */
-const isOption = (text: string): boolean => text.startsWith("--") && NAMES.includes(text.slice(2).split("=")[0]);
 
 function valueOf(option: Option, given: readonly string[]): string | number | readonly string[] {
   const { name, kind } = option;

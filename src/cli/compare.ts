@@ -1,5 +1,3 @@
-import { join } from "node:path";
-import { compare } from "../engine/compare";
 import type { Comparison } from "../engine/comparison";
 import type { Problem } from "../engine/findings";
 import { checkPlan } from "../plan/check";
@@ -9,9 +7,9 @@ import { toMarkdown } from "../report/markdown";
 import { present } from "../report/present";
 import { toText } from "../report/text";
 import { sayProblem } from "../report/wording/problem";
-import { SecondThread } from "../threads/second";
 import type { Arguments } from "./arguments";
 import { dateOf } from "./date";
+import { fit } from "./fit";
 import { readInput } from "./input";
 import { questionOf } from "./question";
 import type { Question } from "./question";
@@ -24,9 +22,9 @@ import { checkPlace, writeFile } from "./write";
 export interface Said {
   readonly out: string;
   readonly aside: string;
+  /** 0 where it is not given. */
+  readonly exitCode?: number;
 }
-
-const second = new SecondThread(join(__dirname, "assistant.js"));
 
 /** @throws Refusal where the input cannot be used */
 export function runCompare({ positionals: [path], values }: Arguments): Said {
@@ -43,7 +41,7 @@ export function runCompare({ positionals: [path], values }: Arguments): Said {
   const to = values.get("to") as string | undefined;
   if (to !== undefined) checkPlace(to, files);
   const format = (values.get("as") ?? "text") as Format;
-  const out = written(compare(table, question.plan, second.passing(table.rows)), question, format);
+  const out = written(fit(table, question.plan), question, format);
   const aside = question.filledIn.length > 0 ? say.guessed(question.filledIn) + "\n" : "";
   if (to === undefined) return { out, aside };
   writeFile(to, out, files);

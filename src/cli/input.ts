@@ -31,16 +31,19 @@ export function readInput(
   const parsed = parsePlan(new TextDecoder().decode(file.bytes), path);
   if (!parsed.ok) return { ok: false, problem: parsed.problems[0] };
   const data = parsed.plan.data!; // a plan file without it is not understood
-  const csv = dataOf(path, data);
+  const csv = pathNamed(path, data);
   if (csv === null) return { ok: false, problem: { code: "outside-folder", path: data, file: path, ...parsed.at(["data"]) } };
   const shown = relative(process.cwd(), csv);
   return readData(csv, shown.startsWith("..") ? csv : shown, missing ?? parsed.plan.missing, parsed, [path]);
 }
 
-/** The CSV of a plan, inside the plan's folder or the current one, wherever symbolic links lead; null outside of both. */
-function dataOf(plan: string, data: string): string | null {
-  const roots = [dirname(resolve(plan)), process.cwd()];
-  const named = resolveData(resolve(plan), data, roots);
+/**
+ * The file another one names (a plan its CSV, a document its plan), inside that one's folder or the current one, wherever symbolic links
+ * lead; null outside of both.
+ */
+export function pathNamed(by: string, path: string): string | null {
+  const roots = [dirname(resolve(by)), process.cwd()];
+  const named = resolveData(resolve(by), path, roots);
   if (!named.ok) return null;
   let real: string;
   try {

@@ -1,6 +1,6 @@
 import { VALUES } from "./values";
 
-/** One option of `compare`: how its value is written, and what it does, for the help. */
+/** One option of a command: how its value is written, and what it does, for the help. */
 export interface Option {
   readonly name: string;
   readonly kind: "text" | "list" | "number" | "word";
@@ -78,3 +78,20 @@ export const GROUPS: readonly { readonly title: string; readonly options: readon
 ];
 
 export const OPTIONS: readonly Option[] = GROUPS.flatMap(({ options }) => options);
+
+/** The path a new block is written for. */
+export const BLOCK_OPTIONS: readonly Option[] = [
+  { name: "for", kind: "text", value: "DOC.md", help: "document the block is for: the plan's path is written relative to it" },
+];
+
+/** What each command takes. */
+export const COMMANDS = {
+  compare: { options: OPTIONS, flags: [] },
+  block: { options: BLOCK_OPTIONS, flags: [] },
+  check: { options: [], flags: [] },
+  refresh: { options: [], flags: ["overwrite-edits"] },
+} as const satisfies Record<string, { readonly options: readonly Option[]; readonly flags: readonly string[] }>;
+
+export type Command = keyof typeof COMMANDS;
+
+export const isCommand = (word: string | undefined): word is Command => word !== undefined && Object.hasOwn(COMMANDS, word);

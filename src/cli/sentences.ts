@@ -2,14 +2,22 @@
 export const say = {
   noCommand: "Name a command, as in: slantwise compare FILE.csv (slantwise --help says more).",
   unknownCommand: (word: string) =>
-    `There is no command ${quoted(word)}; the one there is: slantwise compare FILE (slantwise --help says more).`,
+    `There is no command ${quoted(word)}; there are compare, block, check and refresh (slantwise --help says more).`,
   fileForCommand: (file: string) => `To compare a file, name the command first: slantwise compare ${file}`,
   noFile: "Name a .csv or a .slantwise.json to compare, as in: slantwise compare FILE.csv",
+  noPlan: "Name the plan a block is made from, as in: slantwise block PLAN.slantwise.json",
+  noDocument: (command: string) => `Name a document, as in: slantwise ${command} DOC.md`,
+  notDocument: (file: string) => `${file}: a document's name ends in .md, .markdown, .qmd or .Rmd; this one is not read.`,
+  notUtf8: (file: string) => `${file}: the text is not UTF-8; save the document as UTF-8.`,
+  readOnly: "it is read-only",
+  changedMeanwhile: (file: string) => `${file} was changed while it was being read, and is left as it is; run this again.`,
+  otherDrive: (plan: string) => `${plan} cannot be named relative to the document; keep both on one drive.`,
+  nothingThere: "no write-up block and no inline number",
   severalFiles: (files: readonly string[]) =>
-    `One file is compared at a time; these are ${files.length}: ${files.slice(0, 3).join(", ")}${files.length > 3 ? ", …" : ""}. A name with spaces goes in quotes.`,
+    `One file at a time; these are ${files.length}: ${files.slice(0, 3).join(", ")}${files.length > 3 ? ", …" : ""}. A name with spaces goes in quotes.`,
   planName: (file: string) => `A plan's name ends in .slantwise.json; ${file} does not.`,
-  unknownOption: (option: string, nearest: string | null) =>
-    `There is no option ${option}${nearest ? `; the nearest is --${nearest}` : ""}. slantwise compare --help lists them.`,
+  unknownOption: (option: string, nearest: string | null, command: string) =>
+    `There is no option ${option}${nearest ? `; the nearest is --${nearest}` : ""}. slantwise ${command} --help lists them.`,
   noValue: (name: string, value: string) => `--${name} needs a value: --${name} ${value}`,
   valueForFlag: (name: string) => `--${name} takes no value.`,
   twice: (name: string) => `--${name} is given twice; it can have one value.`,

@@ -5,6 +5,7 @@ import { columnName, heldName, listed, rowsName } from "./names";
 import type { Line, ShiftRow } from "./presentation";
 import { scaleOf } from "./scale";
 import type { Scale } from "./scale";
+import { noSingle } from "./wording/difference";
 import { plainName } from "./wording/readout";
 import { sayReason } from "./wording/reason";
 
@@ -87,12 +88,11 @@ function shiftRow(
 
 /** "+340 (290, 390)", "no single difference: slopes differ in floor_m2", or the reason there is none. */
 function differenceText(comparison: Comparison, plan: Plan, scale: Scale, decimals: number, { readout }: ContrastResult): string {
-  const what = comparison.question.kind === "groups" ? "difference" : "slope";
   switch (readout.kind) {
     case "none":
       return `none: ${sayReason(readout.reason, plan)}`;
     case "varies":
-      return `no single ${what}: slopes differ in ${listed(readout.modifiers.map((m) => columnName(m, plan)))}`;
+      return `${noSingle(comparison.question)}: slopes differ in ${listed(readout.modifiers.map((m) => columnName(m, plan)))}`;
     case "plain":
     case "single":
     case "undecided": {

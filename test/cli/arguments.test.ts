@@ -1,9 +1,10 @@
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { readArguments } from "../../src/cli/arguments";
-import { compareHelp, PROGRAM_HELP } from "../../src/cli/help";
+import { compareHelp, helpOf, PROGRAM_HELP } from "../../src/cli/help";
 import { splitList } from "../../src/cli/list";
-import { OPTIONS } from "../../src/cli/options";
+import { COMMANDS, OPTIONS } from "../../src/cli/options";
+import type { Command } from "../../src/cli/options";
 import { Refusal } from "../../src/cli/refusal";
 
 const values = (...args: string[]) => Object.fromEntries(readArguments(["compare", "a.csv", ...args]).values);
@@ -95,6 +96,11 @@ describe("the help", () => {
     expect(long).toEqual([]);
   });
   test("offers only what there is", () => {
-    expect(PROGRAM_HELP.match(/slantwise [a-z]+/g)).toEqual(["slantwise compare", "slantwise compare"]);
+    expect([...new Set(PROGRAM_HELP.match(/slantwise [a-z]+/g))].sort()).toEqual(
+      Object.keys(COMMANDS)
+        .map((name) => `slantwise ${name}`)
+        .sort(),
+    );
+    for (const name of Object.keys(COMMANDS) as Command[]) expect(helpOf(name)).toMatch(new RegExp(`^slantwise ${name} `));
   });
 });

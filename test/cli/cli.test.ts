@@ -168,7 +168,7 @@ describe("a mistake is one sentence on stderr and exit code 2", () => {
   test("in the call", () => {
     expect(refused()).toContain("slantwise compare FILE.csv");
     expect(refused("flats.csv")).toContain("slantwise compare flats.csv");
-    for (const word of ["check", "refresh", "compair"])
+    for (const word of ["verify", "Check", "toString"])
       expect(refused(word, "notes.md")).toContain(`There is no command "${word}"`);
     expect(refused("compare")).toContain("Name a .csv or a .slantwise.json");
     expect(refused("compare", "a.csv", "b.csv")).toContain("One file is compared at a time; these are 2: a.csv, b.csv.");

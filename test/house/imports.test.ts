@@ -39,7 +39,7 @@ const RULES: Readonly<Record<string, Rule>> = {
 };
 
 /** The page may use the report's pure formatting, not what writes a comparison out. */
-const NOT_FOR_THE_PAGE = /^report\/(present|markdown|json|csv|text|table)(\/|$)/;
+const NOT_FOR_THE_PAGE = /^report\/(present|markdown|json|csv|text|table|writeup)(\/|$)/;
 
 function partOf(file: string): string {
   const inSource = /^src\/([^/.]+)/.exec(file);

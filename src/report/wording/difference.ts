@@ -38,6 +38,11 @@ export function comparedGroups({ comparison, exposure, contrast }: Voice): strin
   return `for ${exposure} = ${word(contrast.level!)} than for ${word(question.reference!)}`;
 }
 
+/** "no single difference": what stands where slopes differ, instead of a number. */
+export function noSingle({ kind }: Comparison["question"]): string {
+  return `no single ${kind === "groups" ? "difference" : "slope"}`;
+}
+
 /** Decimals at which an estimate with its error is said. */
 export function decimalsOf({ scale }: Voice, { estimate, standardError }: Pick<Estimate, "estimate" | "standardError">): number {
   return decimalsFor([scale.showError(standardError, estimate)], scale.show(estimate));
