@@ -14,7 +14,7 @@ export const say = {
   otherDrive: (plan: string) => `${plan} cannot be named relative to the document; keep both on one drive.`,
   nothingThere: "no write-up block and no inline number",
   severalFiles: (files: readonly string[]) =>
-    `One file at a time; these are ${files.length}: ${files.slice(0, 3).join(", ")}${files.length > 3 ? ", …" : ""}. A name with spaces goes in quotes.`,
+    `One file is compared at a time; these are ${files.length}: ${files.slice(0, 3).join(", ")}${files.length > 3 ? ", …" : ""}. A name with spaces goes in quotes.`,
   planName: (file: string) => `A plan's name ends in .slantwise.json; ${file} does not.`,
   unknownOption: (option: string, nearest: string | null, command: string) =>
     `There is no option ${option}${nearest ? `; the nearest is --${nearest}` : ""}. slantwise ${command} --help lists them.`,

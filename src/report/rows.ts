@@ -9,7 +9,8 @@ import { noSingle } from "./wording/difference";
 import { plainName } from "./wording/readout";
 import { sayReason } from "./wording/reason";
 
-const DASH = "–";
+/** Stands in a cell that has nothing to say. */
+export const DASH = "–";
 
 /** Decimals of the two number columns of one contrast's table. */
 interface Columns {

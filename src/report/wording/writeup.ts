@@ -2,6 +2,7 @@ import type { Comparison } from "../../engine/comparison";
 import type { Plan } from "../../engine/plan";
 import { count } from "../digits";
 import { heldName, listed, oneLine, rowsName, word } from "../names";
+import { DASH } from "../rows";
 import type { ValueFault } from "../writeup/figure";
 import type { BrokenReason } from "../writeup/find";
 import type { Reviewed } from "../writeup/review";
@@ -61,7 +62,8 @@ function sayReported(was: PrintedRow | undefined, now: PrintedRow | undefined): 
   else if (difference !== now[1]) said.push(`estimate with its interval was ${difference}, is ${now[1]}`);
   // a shift moves with the estimate: it is said where the estimate did not
   else if (shift !== now[2]) said.push(`shift was ${shift}, is ${now[2]}`);
-  if (word !== now[3]) said.push(`in a word it was ${word}, is ${now[3]}`);
+  // a dash is no word: the estimate says what became of it
+  if (word !== now[3] && word !== DASH && now[3] !== DASH) said.push(`in a word it was ${word}, is ${now[3]}`);
   return said;
 }
 

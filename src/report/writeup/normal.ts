@@ -20,7 +20,7 @@ export function normalText(text: string): string {
       open = true;
     }
   }
-  return parts.join("\n");
+  return parts.join("\n\n");
 }
 
 /** Cells without padding. Our own cells hold no bar: it is written as a character reference. */
