@@ -17,6 +17,8 @@ export type PageMessage = { readonly v: typeof PROTOCOL_VERSION } & (
   /** Rows to list of a long table. */
   | { readonly type: "filter"; readonly filter: SetFilter }
   | { readonly type: "copy"; readonly id: number; readonly as: "markdown" | "table" }
+  /** Save a bare CSV's question as a plan file. */
+  | { readonly type: "savePlan" }
   /** Open the CSV (or the plan) at a line. */
   | { readonly type: "openLine"; readonly line: number; /** The line is one of the plan file. */ readonly inPlan?: boolean }
   /** Actions named on a status: choose another file, read again. */
@@ -54,6 +56,7 @@ export interface PanelState {
   readonly file: string;
   /** What the page was opened from, kept by the page for a reload: URI string of the CSV or plan. */
   readonly target: string;
+  readonly keptIn: KeptIn;
   readonly status: Status;
   /** Null until the file has been read once. */
   readonly question: QuestionState | null;
@@ -68,6 +71,14 @@ export interface PanelState {
    * its figure.
    */
   readonly slopes: SlopesSection | null;
+}
+
+/** Where the question is kept. */
+export interface KeptIn {
+  /** Name of the plan file; null while there is none. */
+  readonly plan: string | null;
+  /** Why the question is in no file, or the file does not hold the last choice: one sentence; null where all is well. */
+  readonly note: string | null;
 }
 
 export type Status =

@@ -23,11 +23,14 @@ export class Memory {
     return { plan: entry.plan, guessed: entry.guessed };
   }
 
-  remember(target: string, chosen: Chosen, planText: PlanText | null): void {
+  /** @param chosen null forgets what was remembered */
+  remember(target: string, chosen: Chosen | null, planText: PlanText | null): void {
+    if (!chosen && !this.questions()[target]) return;
     const kept = Object.entries(this.questions())
       .filter(([other]) => other !== target)
       .slice(-(LIMIT - 1));
-    void this.store.update(QUESTIONS, Object.fromEntries([...kept, [target, { ...chosen, basis: basisOf(planText) }]]));
+    const entry = chosen ? [[target, { ...chosen, basis: basisOf(planText) }] as const] : [];
+    void this.store.update(QUESTIONS, Object.fromEntries([...kept, ...entry]));
   }
 
   opened(target: string, title: string): void {

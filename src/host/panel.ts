@@ -5,6 +5,7 @@ import { Channel } from "./channel";
 import { html, pageRoot } from "./html";
 import type { Memory } from "./memory";
 import { openLine } from "./openLine";
+import { createPlan, rewritePlan } from "./planFile";
 import { saveFigure } from "./saveFigure";
 import { Subject } from "./subject";
 import { watchFile } from "./watch";
@@ -23,38 +24,48 @@ export interface House {
   readonly log: vscode.LogOutputChannel;
 }
 
+export interface PanelEvents {
+  readonly closed: () => void;
+  /** It is about another file now. */
+  readonly moved: (key: string) => void;
+}
+
 /** One webview panel and what it is about. The truth is in the subject; the page renders one state message. */
 export class ComparisonPanel {
   private readonly subject: Subject;
   private readonly channel: Channel;
+  private readonly memory: Memory;
   private posting = false;
-  private readonly targetPath: string;
+  private saving = false;
+  private key: string;
+  private targetPath: string;
 
   constructor(
     house: House,
     target: vscode.Uri,
     private readonly panel: vscode.WebviewPanel,
-    closed: () => void,
+    private readonly events: PanelEvents,
   ) {
     const { extension, compute, memory, log } = house;
-    const key = target.toString();
+    this.memory = memory;
+    this.key = target.toString();
     this.targetPath = target.fsPath;
     const { webview } = panel;
     webview.options = { enableScripts: true, localResourceRoots: [pageRoot(extension)] };
     const icon = (theme: string) => vscode.Uri.joinPath(extension, "dist", "icons", `panel-${theme}.svg`);
     panel.iconPath = { light: icon("light"), dark: icon("dark") };
-    panel.title = words.panelTitle(basename(this.targetPath).replace(PLAN_ENDING, ""));
-    memory.opened(key, panel.title);
+    this.entitle();
 
     this.channel = new Channel(webview, (text) => log.warn(text));
     this.subject = new Subject({
-      target: key,
+      target: this.key,
       path: this.targetPath,
       compute,
-      folders: () => (vscode.workspace.workspaceFolders ?? []).map((folder) => folder.uri.fsPath),
+      folders,
       watch: watchFile,
-      recall: (planText) => memory.chosen(key, planText),
-      remember: (chosen, planText) => memory.remember(key, chosen, planText),
+      recall: (planText) => memory.chosen(this.key, planText),
+      remember: (chosen, planText) => memory.remember(this.key, chosen, planText),
+      rewrite: rewritePlan,
       changed: () => this.changed(),
       log: (text) => log.info(text),
     });
@@ -66,8 +77,8 @@ export class ComparisonPanel {
       heard.dispose();
       shown.dispose();
       this.subject.dispose();
-      memory.closed(key);
-      closed();
+      memory.closed(this.key);
+      events.closed();
     });
     webview.html = html(webview, extension);
   }
@@ -97,6 +108,34 @@ export class ComparisonPanel {
     return said;
   }
 
+  close(): void {
+    this.panel.dispose();
+  }
+
+  private entitle(): void {
+    this.panel.title = words.panelTitle(basename(this.targetPath).replace(PLAN_ENDING, ""));
+    this.memory.opened(this.key, this.panel.title);
+  }
+
+  /** The question of a bare CSV becomes a plan file, which the panel is about from then on. */
+  private async savePlan(): Promise<void> {
+    const { csv } = this.subject;
+    const { question, keptIn } = this.subject.state();
+    if (csv === null || !question || keptIn.plan !== null || this.saving) return;
+    this.saving = true;
+    const saved = await createPlan(csv, question.plan, folders());
+    this.saving = false;
+    if (saved === null) return;
+    if ("note" in saved) return this.subject.say(saved.note);
+    this.memory.closed(this.key);
+    const target = vscode.Uri.file(saved.path);
+    this.events.moved(target.toString());
+    this.key = target.toString();
+    this.targetPath = saved.path;
+    this.entitle();
+    this.subject.adopt(this.key, saved.path, saved.text);
+  }
+
   private async handle(message: PageMessage): Promise<void> {
     switch (message.type) {
       case "ready":
@@ -108,6 +147,8 @@ export class ComparisonPanel {
       case "copy":
         await this.copy(message.as, message.id);
         return;
+      case "savePlan":
+        return this.savePlan();
       case "openLine":
         return openLine(message.inPlan ? this.targetPath : this.subject.csv, message.line);
       case "readAgain":
@@ -135,6 +176,8 @@ export class ComparisonPanel {
     if (this.panel.visible) this.channel.post({ type: "state", state: this.subject.state() });
   }
 }
+
+const folders = () => (vscode.workspace.workspaceFolders ?? []).map((folder) => folder.uri.fsPath);
 
 /** The local date as in the write-up, YYYY-MM-DD. */
 function today(): string {

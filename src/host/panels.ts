@@ -52,13 +52,23 @@ export class Panels implements vscode.WebviewPanelSerializer {
   }
 
   private adopt(target: vscode.Uri, panel: vscode.WebviewPanel): void {
-    const key = target.toString();
-    const closed = () => {
-      this.panels.delete(key);
-      if (this.latest === key) this.latest = [...this.panels.keys()].at(-1) ?? null;
-      this.tell();
-    };
-    this.panels.set(key, new ComparisonPanel(this.house, target, panel, closed));
+    let key = target.toString();
+    const opened: ComparisonPanel = new ComparisonPanel(this.house, target, panel, {
+      closed: () => {
+        if (this.panels.get(key) === opened) this.panels.delete(key);
+        if (this.latest === key) this.latest = [...this.panels.keys()].at(-1) ?? null;
+        this.tell();
+      },
+      moved: (to) => {
+        // one panel a plan: one whose file was written over gives way
+        this.panels.get(to)?.close();
+        this.panels.delete(key);
+        if (this.latest === key) this.latest = to;
+        key = to;
+        this.panels.set(key, opened);
+      },
+    });
+    this.panels.set(key, opened);
     panel.onDidChangeViewState(() => {
       if (panel.active) this.latest = key;
     });

@@ -1,8 +1,6 @@
-import { applyChange } from "../plan/change";
 import type { PanelState, PlanChange, QuestionState, Reading, SetFilter } from "../protocol";
 import type { Presentation } from "../report/presentation";
-import { askOf } from "./ask";
-import { settlesGuess } from "./choose";
+import { Asked } from "./asked";
 import { Held } from "./held";
 import { GRACE_MS } from "./quiet";
 import type { Chosen, PlanText, SessionParts } from "./sessionParts";
@@ -12,6 +10,9 @@ import type { Trouble } from "./status";
 import type { Run } from "./worker/client";
 import type { Compared, Outcome, Stamp } from "./worker/messages";
 import { sameStamp, stampIn } from "./worker/stamp";
+
+/** What a session knows of the panel's state; where the question is kept is its subject's to say. */
+export type SessionState = Omit<PanelState, "target" | "keptIn">;
 
 /** Progress is worth showing after this long. */
 const SLOW_MS = 500;
@@ -40,25 +41,20 @@ export class Session {
   private lastStamp: Stamp | null = null;
   /** Holds back the results of a run that began before its file had settled. */
   private gate: { readonly stamp: Stamp; readonly open: () => void } | null = null;
-  /** Until the first result: a remembered question may still give way. */
-  private fresh = true;
   private readonly held: Held;
-  private planText: PlanText | null;
-  private chosen: Chosen | null;
+  private readonly asked: Asked;
   readonly slopes: OpenSlopes;
 
   constructor(private readonly parts: SessionParts) {
     this.held = new Held(parts);
     this.slopes = new OpenSlopes(parts, () => this.lost());
-    this.planText = parts.planText;
-    this.chosen = parts.chosen;
+    this.asked = new Asked(parts.planText, parts.chosen);
   }
 
-  state(): PanelState {
-    const { target, csv } = this.parts;
+  state(): SessionState {
+    const { csv } = this.parts;
     return {
       file: csv.file,
-      target,
       status: statusOf({
         stirring: this.stirring || this.run !== null || this.held.waiting,
         missing: this.missing ? this.parts.missingText(csv.file) : null,
@@ -118,26 +114,30 @@ export class Session {
 
   // — the question —
 
-  /** The plan file's text, newly read: it replaces what was chosen in the panel over another text. */
+  /** The question asked where it stands in no plan file; null where it does. */
+  get apart(): Chosen | null {
+    return this.asked.apart;
+  }
+
+  /** The plan file's text, newly read or written: compared only where it asks something else. */
   planChanged(text: PlanText, chosen: Chosen | null): void {
-    if (text.text === this.planText?.text) return;
-    this.planText = text;
-    this.chosen = chosen;
+    if (text.text === this.asked.text) return;
+    const guessed = this.question?.guessed ?? false;
+    if (!this.asked.planChanged(text, chosen) && !this.trouble && !guessed) return;
     this.shown = null;
     this.compareAnew(true);
   }
 
-  choose(change: PlanChange): void {
-    if (!this.question) return;
-    const guessed = this.question.guessed && !settlesGuess(change);
-    this.chosen = { plan: applyChange(this.question.plan, change), guessed };
+  /** @returns the question as it is now; null where there is none yet */
+  choose(change: PlanChange): Chosen | null {
+    if (!this.question) return null;
+    const chosen = this.asked.choose(this.question, change);
     // shown at once, so that the next choice builds on this one
-    this.question = { ...this.question, plan: this.chosen.plan, guessed };
+    this.question = { ...this.question, ...chosen };
     this.shown = null;
-    this.fresh = false;
-    this.parts.remember(this.chosen);
     this.compareAnew(false);
     this.parts.changed();
+    return chosen;
   }
 
   async setFilter(filter: SetFilter): Promise<void> {
@@ -195,7 +195,7 @@ export class Session {
       if (this.run === run) then();
     };
     const known = this.shown?.sha256 ?? null;
-    const ask = askOf(this.chosen, this.planText, this.fresh);
+    const ask = this.asked.ask();
     const run: Run = compute.compare(
       { session: target, path: csv.path, file: csv.file, ask, filter, reread: again, known },
       {
@@ -261,12 +261,12 @@ export class Session {
     this.lastSha = result.sha256;
     this.presentation = result.presentation;
     this.question = result.question;
-    if (this.chosen || !this.planText) this.chosen = { plan: result.question.plan, guessed: result.guessed };
+    this.asked.took(result.question.plan, result.guessed);
     this.checking = checking;
     this.trouble = null;
     this.slopes.renew(checking ? null : result.run);
     if (!checking) {
-      this.fresh = false;
+      this.asked.settled();
       this.shown = { sha256: result.sha256, ended: result.ended };
       this.parts.followed.accept(result.stamp);
       const { read, compare } = result.took;

@@ -23,6 +23,7 @@ export interface Followed {
 }
 
 export interface SessionParts {
+  /** What the worker keeps the comparison under; no two sessions share it. */
   readonly target: string;
   readonly csv: { readonly path: string; readonly file: string };
   readonly compute: Compute;
@@ -31,8 +32,6 @@ export interface SessionParts {
   readonly chosen: Chosen | null;
   /** Called whenever `state()` has changed. */
   readonly changed: () => void;
-  /** A person chose: remember the question. */
-  readonly remember: (chosen: Chosen) => void;
   readonly missingText: (file: string) => string;
   readonly log: (text: string) => void;
 }

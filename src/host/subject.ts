@@ -5,10 +5,14 @@ import { parsePlan } from "../plan/parse";
 import type { PanelState, PlanChange, SlopesChoice } from "../protocol";
 import { sayProblem } from "../report/wording/problem";
 import { Follow } from "./follow";
+import { bare, Keeping } from "./keeping";
+import type { Rewrite, Rewritten } from "./keeping";
 import { GRACE_MS } from "./quiet";
 import { Session } from "./session";
+import type { SessionState } from "./session";
 import type { Chosen, PlanText } from "./sessionParts";
 import { dataPath, isPlan } from "./target";
+import { words } from "./words";
 import type { Compute } from "./worker/client";
 import type { Stamp } from "./worker/messages";
 
@@ -22,10 +26,15 @@ export interface SubjectParts {
   readonly folders: () => readonly string[];
   readonly watch: (path: string, poke: () => void) => { dispose(): unknown };
   readonly recall: (planText: PlanText | null) => Chosen | null;
-  readonly remember: (chosen: Chosen, planText: PlanText | null) => void;
+  /** Null where nothing needs to be remembered any more: the plan file holds it. */
+  readonly remember: (chosen: Chosen | null, planText: PlanText | null) => void;
+  readonly rewrite: Rewrite;
   readonly changed: () => void;
   readonly log: (text: string) => void;
 }
+
+/** No two sessions share what the worker keeps. */
+let sessions = 0;
 
 interface Watched {
   readonly session: Session;
@@ -44,15 +53,23 @@ export class Subject {
   private held: NodeJS.Timeout | null = null;
   private slopes: SlopesChoice | null = null;
   private disposed = false;
+  private target: string;
+  private path: string;
+  private keeping: Keeping | null = null;
+  private note: string | null = null;
 
   constructor(private readonly parts: SubjectParts) {
+    this.target = parts.target;
+    this.path = parts.path;
     if (isPlan(parts.path)) this.followPlan();
     else this.followData(parts.path);
   }
 
   state(): PanelState {
-    const state = this.watched?.session.state() ?? this.blank();
-    return this.planTrouble ? { ...state, status: { kind: "unusable", ...this.planTrouble, inPlan: true } } : state;
+    const { target, planTrouble } = this;
+    const session = this.watched?.session.state() ?? this.blank();
+    const status = planTrouble ? ({ kind: "unusable", ...planTrouble, inPlan: true } as const) : session.status;
+    return { ...session, status, target, keptIn: this.keptIn() };
   }
 
   get session(): Session | null {
@@ -64,10 +81,30 @@ export class Subject {
     return this.watched?.csv ?? null;
   }
 
+  /** A choice in the panel: compared at once, and written into the plan file where there is one. */
   choose(change: PlanChange): void {
-    if (!this.session) return;
+    const chosen = this.session?.choose(change);
+    if (!chosen) return;
     this.planTrouble = null;
-    this.session.choose(change);
+    if (this.keeping) this.keeping.keep(change);
+    else this.parts.remember(chosen, null);
+  }
+
+  /** A bare CSV's question was saved as a plan: from now on the panel is about that. */
+  adopt(target: string, path: string, text: string): void {
+    this.target = target;
+    this.path = path;
+    this.note = null;
+    this.planText = { text, file: basename(path) };
+    this.session?.planChanged(this.planText, null);
+    this.followPlan();
+    this.parts.changed();
+  }
+
+  /** Says why a question could not be saved. */
+  say(note: string): void {
+    this.note = note;
+    this.parts.changed();
   }
 
   /** The Slopes section as the page wants it, whatever file is followed. */
@@ -90,7 +127,14 @@ export class Subject {
   }
 
   private followPlan(): void {
-    const { path } = this.parts;
+    const { path } = this;
+    this.keeping = new Keeping({
+      path,
+      rewrite: this.parts.rewrite,
+      known: () => this.planText,
+      apart: () => this.session?.apart ?? null,
+      ended: (result) => this.written(result),
+    });
     const follow = new Follow(path, {
       stirring: () => {
         if (this.held) clearTimeout(this.held);
@@ -104,11 +148,24 @@ export class Subject {
     follow.poke();
   }
 
-  private async readPlan(stamp: Stamp | null): Promise<void> {
-    const { path } = this.parts;
-    const file = basename(path);
-    const text = stamp && (await readFile(path, "utf8").catch(() => null));
+  private written(result: Rewritten): void {
     if (this.disposed) return;
+    this.note = result.ok ? null : result.note;
+    if (result.ok) {
+      this.planText = { text: bare(result.text), file: basename(this.path) };
+      this.session?.planChanged(this.planText, null);
+      this.parts.remember(null, this.planText);
+      // what came while we wrote was not read
+      this.planFollow?.afresh();
+    } else if (this.session?.apart) this.parts.remember(this.session.apart, this.planText);
+    this.parts.changed();
+  }
+
+  private async readPlan(stamp: Stamp | null): Promise<void> {
+    const { path } = this;
+    const file = basename(path);
+    const text = stamp && (await readFile(path, "utf8").then(bare, () => null));
+    if (this.disposed || this.keeping?.busy) return;
     if (text === null) return this.planUnusable({ code: "file-missing", file });
     if (!this.planFollow?.stands(stamp)) return;
     const parsed = parsePlan(text, file);
@@ -119,6 +176,7 @@ export class Subject {
     if (csv === null) return this.whenStill(stamp, () => this.planUnusable({ code: "outside-folder", path: data, file }));
 
     this.planTrouble = null;
+    if (text !== this.planText?.text) this.note = null;
     this.planText = { text, file };
     if (this.watched?.csv === csv) this.watched.session.planChanged(this.planText, this.parts.recall(this.planText));
     else this.followData(csv);
@@ -143,7 +201,7 @@ export class Subject {
     this.leaveData();
     const { parts, planText } = this;
     const session = new Session({
-      target: parts.target,
+      target: `${parts.target}#${++sessions}`,
       csv: { path: csv, file: basename(csv) },
       compute: parts.compute,
       followed: {
@@ -155,7 +213,6 @@ export class Subject {
       planText,
       chosen: parts.recall(planText),
       changed: parts.changed,
-      remember: (chosen) => parts.remember(chosen, this.planText),
       missingText: (file) => sayProblem({ code: "file-missing", file }),
       log: (text) => parts.log(`${basename(csv)}: ${text}`),
     });
@@ -176,9 +233,15 @@ export class Subject {
     this.watched = null;
   }
 
-  private blank(): PanelState {
-    const { path, target } = this.parts;
+  private keptIn(): PanelState["keptIn"] {
+    if (!this.keeping) return { plan: null, note: this.note };
+    const plan = basename(this.path);
+    const apart = this.session?.apart && !this.keeping.busy ? words.notInPlan(plan) : null;
+    return { plan, note: this.note ?? apart };
+  }
+
+  private blank(): SessionState {
     const nothing = { question: null, presentation: null, checking: false, reading: null, filter: null, slopes: null };
-    return { file: basename(path), target, status: { kind: "reading" }, ...nothing };
+    return { file: basename(this.path), status: { kind: "reading" }, ...nothing };
   }
 }

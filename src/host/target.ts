@@ -3,7 +3,7 @@ import { basename, dirname, join, resolve } from "node:path";
 import { parsePlan, PLAN_LIMIT } from "../plan/parse";
 import { resolveData } from "../plan/resolve";
 
-const PLAN_SUFFIX = ".slantwise.json";
+export const PLAN_SUFFIX = ".slantwise.json";
 /** More plans than this in a folder are not searched for the one about a CSV. */
 const PLANS_SEARCHED = 50;
 

@@ -41,6 +41,7 @@ const MESSAGES: Readonly<Record<PageMessage["type"], Check>> = {
   copy: ({ id, as }) => finite(id) && (as === "markdown" || as === "table"),
   openLine: (message) => line(message["line"]) && (message["inPlan"] === undefined || typeof message["inPlan"] === "boolean"),
   readAgain: () => true,
+  savePlan: () => true,
   slopes: ({ choice }) =>
     choice === null ||
     (fields(choice) && orNull(place)(choice["set"]) && orNull(text)(choice["modifier"]) && orNull(place)(choice["contrast"])),

@@ -12,6 +12,8 @@ await build({
   platform: "node",
   format: "cjs",
   target: "node20",
+  // a package's ES modules bundle whole; its UMD file may load parts of itself at run time
+  mainFields: ["module", "main"],
   external: ["vscode", "mocha"],
   sourcemap: "inline",
   logLevel: "warning",

@@ -32,6 +32,14 @@ describe("what a workspace remembers", () => {
     expect(memory.chosen("file:///a.slantwise.json", text)).toEqual(chosen);
     expect(memory.chosen("file:///a.slantwise.json", { ...text, text: "{ }" })).toBeNull();
   });
+  test("a choice that was written into the plan is forgotten, and nothing else", () => {
+    const text = { text: "{}", file: "a.slantwise.json" };
+    memory.remember("file:///a.slantwise.json", chosen, text);
+    memory.remember("file:///b.csv", chosen, null);
+    memory.remember("file:///a.slantwise.json", null, text);
+    expect(memory.chosen("file:///a.slantwise.json", text)).toBeNull();
+    expect(memory.chosen("file:///b.csv", null)).toEqual(chosen);
+  });
   test("open panels are found again by their title until they are closed", () => {
     memory.opened("file:///x/a.csv", "Comparison: a.csv");
     expect(memory.byTitle("Comparison: a.csv")).toBe("file:///x/a.csv");

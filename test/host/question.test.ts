@@ -21,7 +21,7 @@ describe("the question of a session", () => {
     await stage.end(compared("one", stamp(1)));
     stage.session.choose({ key: "outcome", column: "cost" });
     expect(stage.session.state().question?.plan.outcome.column).toBe("cost");
-    expect(stage.remembered).toEqual([{ plan: { ...plan, outcome: { column: "cost" } }, guessed: false }]);
+    expect(stage.session.apart).toEqual({ plan: { ...plan, outcome: { column: "cost" } }, guessed: false });
     expect(stage.last.order).toMatchObject({
       reread: false,
       known: null,
@@ -71,6 +71,33 @@ describe("the question of a session", () => {
     await stage.end(compared("one", stamp(1), { guessed: false }));
     stage.session.planChanged({ text: "{2}", file: "heating.slantwise.json" }, null);
     expect(stage.last.order.ask).toEqual({ kind: "text", text: "{2}", file: "heating.slantwise.json" });
+  });
+
+  test("a plan's text that asks the same is no reason for a second run: an echo of our own writing, or another layout", async () => {
+    const text = (margin: number, space = "") =>
+      `{${space} "data": "heating.csv", "outcome": { "column": "kwh" }, "exposure": { "column": "retrofit" }, "margin": ${margin} }`;
+    const file = "heating.slantwise.json";
+    stage = new Stage({ planText: { text: text(1), file } });
+    const asked = (margin: number) => question({ ...plan, data: "heating.csv", covariates: undefined, margin }, false);
+    stage.save(1);
+    await stage.end(compared("one", stamp(1), { guessed: false, question: asked(1) }));
+    stage.session.choose({ key: "margin", value: 5 });
+    await stage.end(compared("one", stamp(1), { guessed: false, question: asked(5) }));
+    stage.session.planChanged({ text: text(5), file }, null);
+    stage.session.planChanged({ text: text(5, "\n"), file }, null);
+    expect([stage.runs.length, stage.status, stage.session.apart]).toEqual([2, "ready", null]);
+    stage.session.planChanged({ text: text(6), file }, null);
+    expect(stage.last.order.ask).toEqual({ kind: "text", text: text(6), file });
+  });
+
+  test("a guess that is saved as a plan is one no longer", async () => {
+    stage.save(1);
+    await stage.end(compared("one", stamp(1)));
+    const planText = { text: '{ "data": "heating.csv" }', file: "heating.slantwise.json" };
+    stage.session.planChanged(planText, null);
+    expect(stage.last.order.ask).toEqual({ kind: "text", ...planText });
+    await stage.end(compared("one", stamp(1), { guessed: false, question: question(plan, false) }));
+    expect([stage.session.state().question?.guessed, stage.session.apart]).toEqual([false, null]);
   });
 
   test("other rows are presented from the kept comparison", async () => {

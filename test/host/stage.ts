@@ -85,7 +85,6 @@ export const section = (sentence: string): SlopesSection => ({
 export class Stage {
   readonly runs: FakeRun[] = [];
   readonly figures: FakeFigure[] = [];
-  readonly remembered: Chosen[] = [];
   /** The file as it stands; null while it is changing or gone. */
   now: Stamp | null = null;
   /** How long it has stood still, ms. */
@@ -113,7 +112,6 @@ export class Stage {
       planText: over.planText ?? null,
       chosen: over.chosen ?? null,
       changed: () => undefined,
-      remember: (chosen) => void this.remembered.push(chosen),
       missingText: (file) => `${file} is missing`,
       log: () => undefined,
     });

@@ -66,6 +66,7 @@ export function panel(more = {}, shown = {}, asked = {}) {
   return {
     file: "heating.csv",
     target: "file:///heating.csv",
+    keptIn: { plan: null, note: null },
     status: { kind: "ready" },
     checking: false,
     filter: null,

@@ -43,6 +43,20 @@ test("every choice in the sentence is one message of the protocol", async () => 
   ]);
 });
 
+test("a question in no file can be saved as a plan, and a plan's own name opens it; why a choice is not in it is said", async () => {
+  const sent = await sends(STATES["two groups"], (page) =>
+    page.getByRole("button", { name: "Save the question as a plan" }).click(),
+  );
+  assert.deepEqual(sent, [{ v: 1, type: "savePlan" }]);
+  const kept = panel({ keptIn: { plan: "heating.slantwise.json", note: "heating.slantwise.json is read-only." } });
+  const opened = await sends(kept, async (page) => {
+    assert.equal(await page.locator(".plan [role=status]").innerText(), "heating.slantwise.json is read-only.");
+    assert.equal(await page.getByRole("button", { name: "Save the question as a plan" }).count(), 0);
+    await page.getByRole("button", { name: "heating.slantwise.json" }).click();
+  });
+  assert.deepEqual(opened, [{ v: 1, type: "openLine", line: 1, inPlan: true }]);
+});
+
 test("a margin is sent on Enter or when the field is left, once, and only if it is a number above zero or nothing", async () => {
   const sent = await sends(STATES["two groups"], async (page) => {
     const margin = page.locator("[data-role=margin]");

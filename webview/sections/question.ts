@@ -5,6 +5,7 @@ import type { View } from "../view";
 import { head } from "./head";
 import { numberField } from "./numberField";
 import { picker } from "./picker";
+import { planLine } from "./plan";
 import { select } from "./select";
 
 /** Value of the choice that asks for no average; no group is named so, since cells are trimmed. */
@@ -13,17 +14,18 @@ const NO_ROWS = " ";
 const ALL_ROWS = "all rows";
 
 /** The question as a sentence whose words are chosen in place. */
-export function drawQuestion(part: HTMLElement, facts: HTMLElement, { state, choose }: View): void {
+export function drawQuestion(part: HTMLElement, facts: HTMLElement, view: View): void {
+  const { state, choose } = view;
   const { question, file } = state;
   // asked for where there is no single number, and shown as long as it is asked for
   const differs = state.presentation?.blocks.some(({ rows }) => rows.some(({ kind }) => kind === "varies")) ?? false;
   part.hidden = false;
   part.dataset["focusNext"] = "add";
-  redraw(part, [question && { ...question, setsChoice: null, setCount: null }, file, differs], () => {
+  redraw(part, [question && { ...question, setsChoice: null, setCount: null }, file, differs, state.keptIn], () => {
     const sentence = question
       ? sentences(question, differs, choose)
       : [el("p", { class: "quiet" }, "The question follows once the file has been read.")];
-    return [head("question", "Question"), el("div", { class: "body" }, ...sentence, facts)];
+    return [head("question", "Question"), el("div", { class: "body" }, ...sentence, question && planLine(view), facts)];
   });
 }
 

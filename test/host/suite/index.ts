@@ -1,6 +1,7 @@
 import Mocha from "mocha";
 import { liveSuite } from "./live";
 import { manifestSuite } from "./manifest";
+import { planSuite } from "./plan";
 import { questionSuite } from "./question";
 import { saveSuite } from "./save";
 
@@ -10,6 +11,7 @@ export function run(): Promise<void> {
   mocha.suite.emit("pre-require", globalThis as unknown as Mocha.MochaGlobals, "", mocha);
   manifestSuite();
   questionSuite();
+  planSuite();
   liveSuite();
   saveSuite();
   return new Promise((resolve, reject) => {
