@@ -65,7 +65,7 @@ if (Number(process.versions.node.split(".")[0]) < 20) {
   process.exit(1);
 }
 installPackages();
-needDebian({ chromium: ["chromium", "chromium-browser", "google-chrome"], ripgrep: ["rg"] });
+needDebian({ chromium: ["chromium", "chromium-browser", "google-chrome"], ripgrep: ["rg"], pandoc: ["pandoc"] });
 const { layWorkbench } = await import("./workbench/cache.mjs");
 const workbench = layWorkbench();
 console.log(`prepared ${seconds(begun)}`);

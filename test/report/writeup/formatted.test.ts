@@ -1,12 +1,11 @@
 import fc from "fast-check";
 import { format } from "prettier";
 import { describe, expect, test } from "vitest";
-import { readTable } from "../../../src/data/read";
 import type { Plan } from "../../../src/engine/plan";
 import { findMarkers } from "../../../src/report/writeup/find";
 import { normalText } from "../../../src/report/writeup/normal";
 import { openData, sample } from "../outputs";
-import { block, crossed, flats, plan, reviewed, sourceOf, states } from "./written";
+import { block, crossed, flats, hostile, plan, reviewed, sourceOf, states } from "./written";
 
 /** Names that would end a comment, a cell, a table, a quotation or a block, if they were let. */
 const HOSTILE = [
@@ -26,26 +25,6 @@ const HOSTILE = [
   "- j",
   "\\",
 ];
-
-function hostile(name: string): { source: ReturnType<typeof sourceOf>; path: string } {
-  const cell = (text: string) => `"${text.replaceAll('"', '""')}"`;
-  const rows = Array.from({ length: 60 }, (_, i) => [
-    i % 2 ? cell(name) : "none",
-    50 + ((i * 17) % 31),
-    3000 + ((i * 7919) % 97),
-  ]);
-  const csv = [["g", cell(`x ${name}`), "y"], ...rows].map((row) => row.join(",")).join("\n");
-  const read = readTable(new TextEncoder().encode(csv), { file: `${name}.csv` });
-  if (!read.ok) throw new Error(read.problem.code);
-  const [, covariate] = read.table.columns;
-  const question: Plan = {
-    outcome: { column: "y", unit: name },
-    exposure: { column: "g", reference: "none" },
-    covariates: [{ column: covariate.name }],
-    rowsAre: name,
-  };
-  return { source: sourceOf(read.table, question), path: `a ${name}.slantwise.json` };
-}
 
 const swiss: Plan = {
   outcome: { column: "Fertility" },

@@ -1,4 +1,5 @@
 import { fingerprint } from "../../../src/data/fingerprint";
+import { readTable } from "../../../src/data/read";
 import { compare } from "../../../src/engine/compare";
 import type { Plan } from "../../../src/engine/plan";
 import type { Table } from "../../../src/engine/table";
@@ -53,3 +54,24 @@ export const crossed: Table = tableOf(
 );
 
 export const states = (items: readonly Reviewed[]): string[] => items.map(({ verdict }) => verdict.state);
+
+/** A question in which every name is this one, or holds it. */
+export function hostile(name: string): { source: ReturnType<typeof sourceOf>; path: string } {
+  const cell = (text: string) => `"${text.replaceAll('"', '""')}"`;
+  const rows = Array.from({ length: 60 }, (_, i) => [
+    i % 2 ? cell(name) : "none",
+    50 + ((i * 17) % 31),
+    3000 + ((i * 7919) % 97),
+  ]);
+  const csv = [["g", cell(`x ${name}`), "y"], ...rows].map((row) => row.join(",")).join("\n");
+  const read = readTable(new TextEncoder().encode(csv), { file: `${name}.csv` });
+  if (!read.ok) throw new Error(read.problem.code);
+  const [, covariate] = read.table.columns;
+  const question: Plan = {
+    outcome: { column: "y", unit: name },
+    exposure: { column: "g", reference: "none" },
+    covariates: [{ column: covariate.name }],
+    rowsAre: name,
+  };
+  return { source: sourceOf(read.table, question), path: `a ${name}.slantwise.json` };
+}
