@@ -41,7 +41,7 @@ function line({ name, value, help }: Pick<Option, "name" | "value" | "help">): s
   return left.length < WIDTH ? left.padEnd(WIDTH) + help : `${left}\n${" ".repeat(WIDTH)}${help}`;
 }
 
-const PLACES = `Documents are .md, .markdown, .qmd and .Rmd, in UTF-8. A plan is looked for inside the document's folder or the current one.
+const PLACES = `Documents are .md, .markdown, .qmd, .Rmd and the Markdown cells of .ipynb, in UTF-8. A plan is looked for inside the document's folder or the current one.
 `;
 
 const BLOCK_HELP = `slantwise block PLAN.slantwise.json [--for DOC.md]

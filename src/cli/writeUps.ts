@@ -27,18 +27,20 @@ export function runWriteUps(command: "check" | "refresh", { positionals, flags }
   for (const path of positionals) {
     try {
       const document = readDocument(path);
-      const reviewed = review(document.text, { hash: hashOf, date, now: (plan) => planNow(path, plan, sources) });
+      const now = (plan: string) => planNow(path, plan, sources);
+      const parts = document.parts.map((part) => ({ ...part, reviewed: review(part.text, { hash: hashOf, date, now }) }));
       const overwrite = flags.has("overwrite-edits");
       if (command === "refresh") {
-        const text = refreshed(document.text, reviewed, overwrite);
-        if (text !== document.text) writeDocument(document, text);
+        const file = document.withParts(parts.map(({ text, reviewed }) => refreshed(text, reviewed, overwrite)));
+        if (file !== document.file) writeDocument(document, file);
       }
-      if (reviewed.length === 0) out.push(`${path}: ${say.nothingThere}`);
-      for (const item of reviewed) {
-        reach(codeOf(item, command, overwrite));
-        const line = `${path}:${item.line}: ${sayVerdict(item, command === "refresh" ? { overwrite } : null)}`;
-        (item.verdict.state === "unusable" ? aside : out).push(line);
-      }
+      if (parts.every(({ reviewed }) => reviewed.length === 0)) out.push(`${path}: ${say.nothingThere}`);
+      for (const { shown, reviewed } of parts)
+        for (const item of reviewed) {
+          reach(codeOf(item, command, overwrite));
+          const line = `${shown}:${item.line}: ${sayVerdict(item, command === "refresh" ? { overwrite } : null)}`;
+          (item.verdict.state === "unusable" ? aside : out).push(line);
+        }
     } catch (error) {
       if (!(error instanceof Refusal)) throw error;
       aside.push(error.message);

@@ -99,6 +99,27 @@ describe("a report held to its data", () => {
   });
 });
 
+describe("a notebook", () => {
+  const notebook = (...markdown: string[]) => {
+    const source = (text: string) => text.match(/[^\n]*\n|[^\n]+$/g) ?? [];
+    const cells = markdown.map((text) => ({ cell_type: "markdown", metadata: {}, source: source(text) }));
+    const code = { cell_type: "code", execution_count: 1, metadata: {}, outputs: [], source: [value("of=rows", "1")] };
+    return `${JSON.stringify({ cells: [code, ...cells], metadata: {}, nbformat: 4, nbformat_minor: 5 }, null, 1)}\n`;
+  };
+  test("is held to its data in its Markdown cells", () => {
+    const text = block("heating.slantwise.json");
+    put("report.ipynb", notebook("# Heat\n", text));
+    expect(run("check", "report.ipynb")).toMatchObject({ code: 0, out: "report.ipynb, cell 3:1: fresh\n" });
+    loseRows();
+    expect(run("check", "report.ipynb").code).toBe(1);
+    expect(run("refresh", "report.ipynb").code).toBe(0);
+    expect(textOf("report.ipynb")).toBe(notebook("# Heat\n", block("heating.slantwise.json")));
+    expect(run("check", "report.ipynb").code).toBe(0);
+    put("old.ipynb", "{}");
+    expect(run("check", "old.ipynb")).toMatchObject({ code: 2, err: expect.stringContaining("no notebook of format 4") });
+  });
+});
+
 describe("what was edited by hand", () => {
   test("is refused, unless its overwriting is asked for", () => {
     const text = block("heating.slantwise.json");
